@@ -4,8 +4,14 @@ import localFont from "next/font/local";
 
 export const archivo = localFont({
   src: [
-    { path: "../node_modules/@fontsource-variable/archivo/files/archivo-latin-standard-normal.woff2", style: "normal" },
-    { path: "../node_modules/@fontsource-variable/archivo/files/archivo-latin-standard-italic.woff2", style: "italic" },
+    {
+      path: "../node_modules/@fontsource-variable/archivo/files/archivo-latin-standard-normal.woff2",
+      style: "normal",
+    },
+    {
+      path: "../node_modules/@fontsource-variable/archivo/files/archivo-latin-standard-italic.woff2",
+      style: "italic",
+    },
   ],
   weight: "100 900",
   declarations: [{ prop: "font-stretch", value: "62% 125%" }],

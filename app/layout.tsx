@@ -8,7 +8,8 @@ import "katex/dist/katex.min.css";
 
 export const metadata: Metadata = {
   title: { default: "Coldface", template: "%s – Coldface" },
-  description: "Vetted, reusable heat-conduction calculations: run them, keep signed records, call them over REST.",
+  description:
+    "Vetted, reusable heat-conduction calculations: run them, keep signed records, call them over REST.",
 };
 
 export const viewport: Viewport = {
@@ -28,7 +29,11 @@ export default async function RootLayout({ children }: { children: ReactNode }) 
   await connection();
   const nonce = (await headers()).get("x-nonce") ?? undefined;
   return (
-    <html lang="en" className={`${archivo.variable} ${mono.variable} ${greek.variable}`} suppressHydrationWarning>
+    <html
+      lang="en"
+      className={`${archivo.variable} ${mono.variable} ${greek.variable}`}
+      suppressHydrationWarning
+    >
       <head>
         <script nonce={nonce} suppressHydrationWarning dangerouslySetInnerHTML={{ __html: schemeScript }} />
       </head>
