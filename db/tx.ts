@@ -1,0 +1,104 @@
+import "server-only";
+import { CodedError } from "@/lib/core/errors";
+import { log } from "@/lib/core/log";
+import { writer, type Tx } from "./client";
+import { isBusy, isStorageFault } from "./faults";
+
+/**
+ * All writes of this process pass through one queue. Writes that wait at the same time share a transaction, each in
+ * its own savepoint, and so share one flush to the disk; each is still all or nothing, and none is answered before
+ * the commit. Never call `write` inside `write`, and never wait for anything but the database inside.
+ */
+
+interface Job {
+  work: (tx: Tx) => Promise<unknown>;
+  resolve: (value: unknown) => void;
+  reject: (reason: unknown) => void;
+}
+
+interface Queue {
+  jobs: Job[];
+  running: boolean;
+}
+
+const shared = globalThis as typeof globalThis & { coldfaceWrites?: Queue };
+const queue: Queue = (shared.coldfaceWrites ??= { jobs: [], running: false });
+
+const largestGroup = 32;
+const patience = 5000;
+
+/**
+ * Runs `work` in a write transaction and answers its value once that is on the disk. Errors of `work` undo its own
+ * changes and are passed on. Throws CodedError `busy` when another process holds the lock for 5 s, or when the disk
+ * is full or read-only.
+ */
+export function write<T>(work: (tx: Tx) => Promise<T>): Promise<T> {
+  return new Promise<T>((resolve, reject) => {
+    queue.jobs.push({ work, resolve: resolve as (value: unknown) => void, reject });
+    if (!queue.running) {
+      queue.running = true;
+      void drain();
+    }
+  });
+}
+
+async function drain(): Promise<void> {
+  // Writes asked for in this same turn of the event loop join the first group.
+  await Promise.resolve();
+  while (queue.jobs.length > 0) await commitGroup(queue.jobs.splice(0, largestGroup));
+  queue.running = false;
+}
+
+async function commitGroup(group: Job[]): Promise<void> {
+  const deadline = Date.now() + patience;
+  for (;;) {
+    const outcomes: (() => void)[] = [];
+    let started = false;
+    try {
+      await writer().transaction(async (tx) => {
+        started = true;
+        for (const job of group) {
+          try {
+            const value = await tx.transaction(job.work);
+            outcomes.push(() => job.resolve(value));
+          } catch (error) {
+            // The whole transaction is gone with such a fault, and so are the earlier jobs of the group.
+            if (isBusy(error) || isStorageFault(error)) throw error;
+            outcomes.push(() => job.reject(error));
+          }
+        }
+      });
+    } catch (error) {
+      if (isBusy(error) && !started && Date.now() < deadline) {
+        await pause(5 + Math.random() * 45);
+        continue;
+      }
+      const reason = unwritable(error);
+      for (const job of group) job.reject(reason);
+      return;
+    }
+    for (const settle of outcomes) settle();
+    return;
+  }
+}
+
+function unwritable(error: unknown): unknown {
+  if (isBusy(error)) {
+    return new CodedError(
+      "busy",
+      "The database was busy for 5 seconds. Nothing was kept; try again shortly.",
+    );
+  }
+  if (isStorageFault(error)) {
+    log.error("database-not-writable", { error });
+    return new CodedError(
+      "busy",
+      "The database cannot be written at the moment. Nothing was kept; try again later.",
+    );
+  }
+  return error;
+}
+
+function pause(milliseconds: number): Promise<void> {
+  return new Promise((resolve) => setTimeout(resolve, milliseconds));
+}
