@@ -2,6 +2,7 @@ import "server-only";
 import { createClient, type Client } from "@libsql/client";
 import { drizzle, type LibSQLDatabase } from "drizzle-orm/libsql";
 import { env } from "@/lib/core/env";
+import { retryWhileBusy } from "./retry";
 import * as materials from "./schema/materials";
 import * as people from "./schema/people";
 import * as records from "./schema/records";
@@ -72,7 +73,7 @@ export function writeClient(): Client {
 export async function prepareConnections(): Promise<void> {
   const { url, writeClient: client } = connections();
   if (!url.startsWith("file:")) return;
-  await client.execute("PRAGMA journal_mode = WAL");
+  await retryWhileBusy(() => client.execute("PRAGMA journal_mode = WAL"));
   for (const [pragma, wanted] of [
     ["journal_mode", "wal"],
     ["synchronous", 2],

@@ -5,7 +5,7 @@ import { sql } from "drizzle-orm";
 import { migrate } from "drizzle-orm/libsql/migrator";
 import { newId } from "@/lib/core/ids";
 import { prepareConnections, reader, writeClient, writer } from "./client";
-import { isBusy } from "./faults";
+import { retryWhileBusy } from "./retry";
 import journal from "./migrations/meta/_journal.json";
 
 const leaseMilliseconds = 60_000;
@@ -47,25 +47,26 @@ export async function appliedMigration(): Promise<number> {
 
 async function takeLease(holder: string): Promise<void> {
   const deadline = Date.now() + patience;
-  for (;;) {
-    try {
-      const client = writeClient();
-      await client.execute(
-        "CREATE TABLE IF NOT EXISTS migration_lease (id integer PRIMARY KEY CHECK (id = 1), holder text NOT NULL, expires_at integer NOT NULL)",
-      );
-      const taken = await client.execute({
-        sql: `INSERT INTO migration_lease (id, holder, expires_at) VALUES (1, ?, ?)
-              ON CONFLICT (id) DO UPDATE SET holder = excluded.holder, expires_at = excluded.expires_at
-              WHERE migration_lease.expires_at < ? RETURNING holder`,
-        args: [holder, Date.now() + leaseMilliseconds, Date.now()],
-      });
-      if (taken.rows.length === 1) return;
-    } catch (error) {
-      if (!isBusy(error)) throw error;
-    }
+  while (!(await retryWhileBusy(() => claim(holder), patience))) {
     if (Date.now() > deadline) {
-      throw new Error("Another process has been migrating this database for two minutes. Look whether it still runs.");
+      throw new Error(
+        "Another process has been migrating this database for two minutes. Look whether it still runs.",
+      );
     }
     await wait(100);
   }
+}
+
+async function claim(holder: string): Promise<boolean> {
+  const client = writeClient();
+  await client.execute(
+    "CREATE TABLE IF NOT EXISTS migration_lease (id integer PRIMARY KEY CHECK (id = 1), holder text NOT NULL, expires_at integer NOT NULL)",
+  );
+  const taken = await client.execute({
+    sql: `INSERT INTO migration_lease (id, holder, expires_at) VALUES (1, ?, ?)
+          ON CONFLICT (id) DO UPDATE SET holder = excluded.holder, expires_at = excluded.expires_at
+          WHERE migration_lease.expires_at < ? RETURNING holder`,
+    args: [holder, Date.now() + leaseMilliseconds, Date.now()],
+  });
+  return taken.rows.length === 1;
 }

@@ -3,6 +3,7 @@ import { CodedError } from "@/lib/core/errors";
 import { log } from "@/lib/core/log";
 import { writer, type Tx } from "./client";
 import { isBusy, isStorageFault } from "./faults";
+import { retryWhileBusy } from "./retry";
 
 /**
  * All writes of this process pass through one queue. Writes that wait at the same time share a transaction, each in
@@ -25,7 +26,6 @@ const shared = globalThis as typeof globalThis & { coldfaceWrites?: Queue };
 const queue: Queue = (shared.coldfaceWrites ??= { jobs: [], running: false });
 
 const largestGroup = 32;
-const patience = 5000;
 
 /**
  * Runs `work` in a write transaction and answers its value once that is on the disk. Errors of `work` undo its own
@@ -50,35 +50,30 @@ async function drain(): Promise<void> {
 }
 
 async function commitGroup(group: Job[]): Promise<void> {
-  const deadline = Date.now() + patience;
-  for (;;) {
-    const outcomes: (() => void)[] = [];
-    let started = false;
-    try {
-      await writer().transaction(async (tx) => {
-        started = true;
-        for (const job of group) {
-          try {
-            const value = await tx.transaction(job.work);
-            outcomes.push(() => job.resolve(value));
-          } catch (error) {
-            // The whole transaction is gone with such a fault, and so are the earlier jobs of the group.
-            if (isBusy(error) || isStorageFault(error)) throw error;
-            outcomes.push(() => job.reject(error));
-          }
-        }
-      });
-    } catch (error) {
-      if (isBusy(error) && !started && Date.now() < deadline) {
-        await pause(5 + Math.random() * 45);
-        continue;
-      }
-      const reason = unwritable(error);
-      for (const job of group) job.reject(reason);
-      return;
-    }
-    for (const settle of outcomes) settle();
+  const outcomes: (() => void)[] = [];
+  try {
+    // Only the beginning of a transaction meets a foreign lock: it takes the write lock at once (BEGIN IMMEDIATE).
+    await retryWhileBusy(() =>
+      writer().transaction(async (tx) => {
+        for (const job of group) outcomes.push(await runInSavepoint(tx, job));
+      }),
+    );
+  } catch (error) {
+    const reason = unwritable(error);
+    for (const job of group) job.reject(reason);
     return;
+  }
+  for (const settle of outcomes) settle();
+}
+
+async function runInSavepoint(tx: Tx, job: Job): Promise<() => void> {
+  try {
+    const value = await tx.transaction(job.work);
+    return () => job.resolve(value);
+  } catch (error) {
+    // With a fault of the storage the whole transaction is gone, and so are the earlier jobs of the group.
+    if (isStorageFault(error)) throw error;
+    return () => job.reject(error);
   }
 }
 
@@ -97,8 +92,4 @@ function unwritable(error: unknown): unknown {
     );
   }
   return error;
-}
-
-function pause(milliseconds: number): Promise<void> {
-  return new Promise((resolve) => setTimeout(resolve, milliseconds));
 }
