@@ -1,1 +1,5 @@
 export * from "./types";
+export { languageConstants, languageFunctions, reservedWords, specialForms } from "./functions";
+export type { ConstantRow, FunctionRow, SpecialFormName, SpecialFormRow, TypeRule } from "./functions";
+export { limits } from "./limits";
+export { parseExpression, parseWorking } from "./parse";

@@ -1,0 +1,88 @@
+/** Signs that people type or paste and that are not in the language, with what is meant. */
+
+export interface ForeignSign {
+  readonly sign: string;
+  /** Words of the language that stand for it; empty when there is no such thing here. */
+  readonly means: string;
+  readonly hint?: string;
+}
+
+/** Longer ones first: the first that fits is taken. */
+export const foreignSigns: readonly ForeignSign[] = [
+  { sign: "===", means: "==" },
+  { sign: "!==", means: "!=" },
+  { sign: "**", means: "^" },
+  { sign: "||", means: "or" },
+  { sign: "&&", means: "and" },
+  { sign: "<>", means: "!=" },
+  { sign: "=<", means: "<=" },
+  { sign: ":=", means: "=" },
+  { sign: "×", means: "*" },
+  { sign: "·", means: "*" },
+  { sign: "⋅", means: "*" },
+  { sign: "•", means: "*" },
+  { sign: "∙", means: "*" },
+  { sign: "∗", means: "*" },
+  { sign: "÷", means: "/" },
+  { sign: "∕", means: "/" },
+  { sign: "−", means: "-" },
+  { sign: "–", means: "-" },
+  { sign: "—", means: "-" },
+  { sign: "²", means: "^2" },
+  { sign: "³", means: "^3" },
+  { sign: "⁴", means: "^4" },
+  { sign: "≤", means: "<=" },
+  { sign: "≥", means: ">=" },
+  { sign: "≠", means: "!=" },
+  { sign: "½", means: "(1/2)" },
+  { sign: ";", means: "", hint: "Write one statement on a line." },
+  { sign: "[", means: "", hint: "Lists come from the columns of a table; `at(list, i)` reads an element." },
+  { sign: "]", means: "", hint: "Lists come from the columns of a table; `at(list, i)` reads an element." },
+  { sign: "{", means: "", hint: "Only round brackets are used." },
+  { sign: "}", means: "", hint: "Only round brackets are used." },
+  { sign: "%", means: "", hint: 'A share in per cent is a quantity: "5 %".' },
+  { sign: "!", means: "", hint: "Write `not (…)` for the contrary and `product(…)` for a product." },
+  { sign: "&", means: "", hint: "Write `and`." },
+  { sign: "|", means: "", hint: "Write `or`, or `abs(x)` for a magnitude." },
+  { sign: "°", means: "", hint: 'A quantity with unit stands in quotes: "60 °C".' },
+  { sign: "√", means: "", hint: "Write `sqrt(x)`." },
+  { sign: "$", means: "", hint: "Names consist of letters, digits and _." },
+  { sign: "_", means: "", hint: "A name begins with a letter." },
+  { sign: "\\", means: "", hint: "Division is written `/`." },
+];
+
+/** Letters that a formula has on paper and a name here cannot have. */
+export const spelledLetters: Readonly<Record<string, string>> = {
+  α: "alpha",
+  β: "beta",
+  γ: "gamma",
+  Γ: "Gamma",
+  δ: "delta",
+  Δ: "Delta",
+  ε: "eps",
+  ζ: "zeta",
+  η: "eta",
+  θ: "theta",
+  ϑ: "theta",
+  Θ: "Theta",
+  κ: "kappa",
+  λ: "lambda",
+  Λ: "Lambda",
+  μ: "mu",
+  µ: "mu",
+  ν: "nu",
+  ξ: "xi",
+  π: "pi",
+  ρ: "rho",
+  σ: "sigma",
+  Σ: "Sigma",
+  τ: "tau",
+  φ: "phi",
+  ϕ: "phi",
+  Φ: "Phi",
+  χ: "chi",
+  ψ: "psi",
+  Ψ: "Psi",
+  ω: "omega",
+  Ω: "Omega",
+};
