@@ -16,6 +16,14 @@ export const ProblemItem = z.object({
   limit: z.union([z.string(), z.number()]).optional(),
 });
 
+/** What is wrong with one row of many; the others stand. */
+export const FaultOfRow = z.object({
+  code: z.enum(codes),
+  detail: z.string(),
+  errors: z.array(ProblemItem).optional(),
+});
+export type FaultOfRow = z.infer<typeof FaultOfRow>;
+
 export const Problem = z.object({
   type: z.string(),
   title: z.string(),

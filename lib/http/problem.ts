@@ -26,7 +26,8 @@ export function codedFrom(error: unknown, mark: RequestMark): CodedError {
 /** The problem document of an error. */
 export function problemDocument(error: CodedError, mark: RequestMark): Problem {
   const code: ErrorCode = error.code;
-  const { headers: _headers, retryAfter: _retryAfter, ...extra } = error.extra;
+  // Meant for headers, not for the document.
+  const { headers: _headers, retryAfter: _retryAfter, challenge: _challenge, ...extra } = error.extra;
   return {
     type: `${env().PUBLIC_URL}${paths.problem(code)}`,
     title: errorCodes[code].title,

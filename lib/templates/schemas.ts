@@ -1,0 +1,133 @@
+import { z } from "zod";
+import { revisionStates } from "@/db/vocabulary";
+import { categories, Definition, Slug } from "@/lib/calculation/definition";
+import { Evaluation, RunRequest, Status } from "@/lib/calculation/evaluation";
+import { pageQuery } from "@/lib/core/paging";
+import { FaultOfRow } from "@/lib/core/problem";
+import { Named, orNull, RevisionMembers, RevisionNumber } from "@/lib/materials/schemas";
+
+/** Shapes of what templates are asked and what they answer. */
+
+const Moment = z.iso.datetime();
+
+export const SlugParam = z.object({ slug: Slug });
+export const RevisionParam = z.object({ slug: Slug, revision: RevisionNumber });
+
+export const RevisionSummary = z.object({ template: z.string(), ...RevisionMembers.shape });
+export const RevisionView = z.object({ ...RevisionSummary.shape, definition: Definition });
+
+export const TemplateItem = z.object({
+  slug: z.string(),
+  title: z.string(),
+  summary: z.string(),
+  category: z.enum(categories),
+  tags: z.array(z.string()),
+  revision: z.int(),
+  state: z.enum(revisionStates),
+  supplied: z.boolean(),
+  adopted: z.boolean(),
+  issuedAt: orNull(Moment),
+  issuedBy: orNull(Named),
+  verifyBy: orNull(Moment),
+  withdrawalDate: orNull(Moment),
+  /** Evaluations and records of all revisions in the last 30 days. */
+  runsLast30Days: z.int(),
+});
+export const TemplatePage = z.object({ items: z.array(TemplateItem), nextCursor: orNull(z.string()) });
+
+export const TemplateView = z.object({
+  slug: z.string(),
+  category: z.enum(categories),
+  createdAt: Moment,
+  /** The revision that a run by slug uses; the latest that may be seen when none is issued. */
+  current: RevisionView,
+});
+export const RevisionPage = z.object({ items: z.array(RevisionSummary), nextCursor: orNull(z.string()) });
+
+export const ListTemplatesQuery = z.strictObject({
+  ...pageQuery,
+  /** Words that title, tag, symbol or quantity begin with. */
+  search: z.string().trim().min(1).max(120).optional(),
+  category: z.enum(categories).optional(),
+  state: z.enum(revisionStates).optional(),
+});
+export const ListRevisionsQuery = z.strictObject(pageQuery);
+
+/** JSON Schema (2020-12) of a revision's inputs. */
+export const InputSchemaView = z.looseObject({
+  $schema: z.string(),
+  $id: z.string(),
+  title: z.string(),
+  type: z.literal("object"),
+  properties: z.record(z.string(), z.unknown()),
+  required: z.array(z.string()),
+  additionalProperties: z.literal(false),
+});
+
+export const RowAnswer = z.union([
+  z.object({
+    status: Status,
+    results: z.record(z.string(), z.union([z.number(), z.array(z.number())])),
+    cautions: z
+      .array(z.object({ code: z.string(), message: z.string(), pointer: z.string().optional() }))
+      .optional(),
+  }),
+  z.object({ problem: FaultOfRow }),
+]);
+export const RowsEvaluation = z.object({
+  template: z.string(),
+  revision: z.int(),
+  definitionHash: z.string(),
+  engine: z.string(),
+  units: z.record(z.string(), z.object({ unit: z.string(), ucum: orNull(z.string()) })),
+  rows: z.array(RowAnswer),
+});
+
+// ───────────────────────────── definitions that are not saved
+
+/** Any JSON: what is wrong with it is the answer, not a refusal. */
+export const CheckDefinitionBody = z.strictObject({ definition: z.unknown() });
+
+export const DiagnosticView = z.object({
+  path: z.string(),
+  line: z.int().optional(),
+  column: z.int().optional(),
+  endLine: z.int().optional(),
+  endColumn: z.int().optional(),
+  severity: z.enum(["error", "warning", "remark"]),
+  code: z.string(),
+  message: z.string(),
+  hint: z.string().optional(),
+  mend: z
+    .object({
+      title: z.string(),
+      span: z.object({ line: z.int(), column: z.int(), endLine: z.int(), endColumn: z.int() }),
+      text: z.string(),
+    })
+    .optional(),
+});
+export const DefinitionCheck = z.object({
+  ok: z.boolean(),
+  diagnostics: z.array(DiagnosticView),
+  lines: z.array(
+    z.object({ symbol: z.string(), quantity: orNull(z.string()), unit: z.string(), shape: z.string() }),
+  ),
+});
+
+export const EvaluateDefinitionBody = z.strictObject({ definition: z.unknown(), ...RunRequest.shape });
+export const DefinitionEvaluation = z.object({
+  definitionHash: z.string(),
+  engine: z.string(),
+  ...Evaluation.shape,
+});
+
+export type RevisionSummary = z.infer<typeof RevisionSummary>;
+export type RevisionView = z.infer<typeof RevisionView>;
+export type TemplateItem = z.infer<typeof TemplateItem>;
+export type TemplateView = z.infer<typeof TemplateView>;
+export type ListTemplatesQuery = z.infer<typeof ListTemplatesQuery>;
+export type RowsEvaluation = z.infer<typeof RowsEvaluation>;
+export type RowAnswer = z.infer<typeof RowAnswer>;
+export type DefinitionCheck = z.infer<typeof DefinitionCheck>;
+export type DefinitionEvaluation = z.infer<typeof DefinitionEvaluation>;
+export type InputSchemaView = z.infer<typeof InputSchemaView>;
