@@ -1,0 +1,17 @@
+import { electricalUnits } from "./electrical";
+import { geometryUnits } from "./geometry";
+import { heatUnits } from "./heat";
+import { mechanicsUnits } from "./mechanics";
+import { otherUnits } from "./other";
+import type { UnitRow } from "./row";
+import { temperatureUnits } from "./temperature";
+
+/** Every unit of the catalogue. */
+export const units: readonly UnitRow[] = [
+  ...geometryUnits,
+  ...temperatureUnits,
+  ...mechanicsUnits,
+  ...heatUnits,
+  ...electricalUnits,
+  ...otherUnits,
+];

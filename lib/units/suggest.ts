@@ -1,0 +1,94 @@
+import { lookup, plainWords } from "./lookup";
+
+interface Explanation {
+  readonly message: string;
+  readonly suggestions: readonly string[];
+}
+
+/** Words that the trade uses for several units; reading one of them would be a guess. */
+const explanations: ReadonlyMap<string, Explanation> = new Map([
+  [
+    "ton",
+    say('"ton" can be a tonne, a short ton, a long ton or a ton of refrigeration.', [
+      "t",
+      "ton_short",
+      "ton_long",
+      "ton_refrigeration",
+    ]),
+  ],
+  [
+    "tons",
+    say('"tons" can be tonnes, short tons, long tons or tons of refrigeration.', [
+      "t",
+      "ton_short",
+      "ton_long",
+      "ton_refrigeration",
+    ]),
+  ],
+  ["MBTU", say('"MBTU" means 1000 BTU to some and 10⁶ BTU to others.', ["kBTU", "MMBTU"])],
+  ["MBtu", say('"MBtu" means 1000 BTU to some and 10⁶ BTU to others.', ["kBTU", "MMBTU"])],
+  ["Cal", say('"Cal" means a kilocalorie to some and a calorie to others.', ["kcal", "cal"])],
+  ["'", say("The foot mark is not read, because it also means arc minute.", ["ft", "arcmin"])],
+  ["′", say("The foot mark is not read, because it also means arc minute.", ["ft", "arcmin"])],
+  ['"', say("The inch mark is not read, because it also means arc second.", ["in", "arcsec"])],
+  ["″", say("The inch mark is not read, because it also means arc second.", ["in", "arcsec"])],
+  ["USD", say("EUR is the only money here.", ["EUR"])],
+  ["GBP", say("EUR is the only money here.", ["EUR"])],
+  ["$", say("EUR is the only money here.", ["EUR"])],
+  ["£", say("EUR is the only money here.", ["EUR"])],
+  ["R", say('"R" is read as neither röntgen nor Rankine nor gas constant.', ["°R"])],
+]);
+
+function say(text: string, suggestions: readonly string[]): Explanation {
+  return { message: `${text} Write ${suggestions.join(" or ")}.`, suggestions };
+}
+
+export function explain(word: string): Explanation | null {
+  return explanations.get(word) ?? null;
+}
+
+const mostSuggestions = 3;
+
+/** Known words nearest to one that is not known: other capitals first, then few changed letters. */
+export function nearestUnits(word: string): readonly string[] {
+  const typed = word.slice(0, 40);
+  const lower = typed.toLowerCase();
+  const otherCase = [...caseVariants(typed), ...plainWords.filter((known) => known.toLowerCase() === lower)];
+  const most = typed.length <= 2 ? 1 : typed.length <= 5 ? 2 : 3;
+  const near = plainWords
+    .map((known) => ({ known, distance: editDistance(lower, known.toLowerCase(), most) }))
+    .filter(({ known, distance }) => distance <= most && distance < Math.max(known.length, typed.length))
+    .sort((a, b) => a.distance - b.distance || a.known.length - b.known.length)
+    .map(({ known }) => known);
+  return [...new Set([...otherCase, ...near])].slice(0, mostSuggestions);
+}
+
+/** `KG` → kg, `mpa` → MPa and mPa, `Kw` → kW: every spelling with other capitals that is read. */
+function caseVariants(word: string): string[] {
+  if (word.length > 6) return [];
+  let variants = [""];
+  for (const letter of word) {
+    const spellings = [...new Set([letter, letter.toLowerCase(), letter.toUpperCase()])];
+    variants = variants.flatMap((begin) => spellings.map((spelling) => begin + spelling));
+  }
+  return variants.filter((variant) => lookup(variant) !== null);
+}
+
+/** Insertions, deletions, changes and swaps of neighbours between two words; `most` + 1 stands for "more". */
+function editDistance(a: string, b: string, most: number): number {
+  if (Math.abs(a.length - b.length) > most) return most + 1;
+  let before: number[] = [];
+  let last = Array.from({ length: b.length + 1 }, (_, j) => j);
+  for (let i = 1; i <= a.length; i += 1) {
+    const row = [i];
+    for (let j = 1; j <= b.length; j += 1) {
+      const change = (last[j - 1] ?? 0) + (a[i - 1] === b[j - 1] ? 0 : 1);
+      let best = Math.min(change, (last[j] ?? 0) + 1, (row[j - 1] ?? 0) + 1);
+      if (a[i - 1] === b[j - 2] && a[i - 2] === b[j - 1] && j > 1 && i > 1)
+        best = Math.min(best, (before[j - 2] ?? 0) + 1);
+      row.push(best);
+    }
+    [before, last] = [last, row];
+  }
+  return last[b.length] ?? most + 1;
+}
