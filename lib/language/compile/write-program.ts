@@ -1,0 +1,146 @@
+import type { ListLength, TypedProgram } from "../types";
+import { FunctionWriter } from "./function-writer";
+import { Graph, type Site } from "./graph";
+import { ModuleWriter, numberLiteral } from "./module-writer";
+import type { Value } from "./value";
+
+/** Above this many nodes every line becomes a function of its own: V8 leaves very long functions unoptimised. */
+const splitAbove = 3000;
+
+export interface WrittenProgram {
+  readonly code: string;
+  readonly sites: readonly Site[];
+}
+
+/** Generates the module of a program: `run`, the conditions, and the state that a run reports. */
+export function writeProgram(program: TypedProgram): WrittenProgram {
+  const module = new ModuleWriter(program);
+  const functions: string[] = [];
+  const run =
+    program.size > splitAbove
+      ? writeLinesApart(module, functions)
+      : writeFunction(module, (writer) => {
+          const graph = new Graph(program, module.sites, (_, index) => values[index]!);
+          const values: Value[] = [];
+          for (const index of program.lines.keys()) values.push(writeLine(writer, graph, index));
+          writer.flush(writer.top);
+          return null;
+        });
+  const pairs: string[] = [];
+  const conditions = program.conditions.map((condition, index) => {
+    const place = -1 - index;
+    const sides = condition.compared;
+    pairs.push(
+      sides === null
+        ? "0"
+        : `[${[sides.value, sides.bound]
+            .map((side) =>
+              writeFunction(
+                module,
+                (writer) => {
+                  const value = alone(module).build(side);
+                  return writer.number(value, writer.top);
+                },
+                place,
+              ),
+            )
+            .join(", ")}]`,
+    );
+    return writeFunction(
+      module,
+      (writer) => writer.condition(alone(module).build(condition.expression), writer.top),
+      place,
+    );
+  });
+  const code = [
+    '"use strict";',
+    "let J = true;",
+    "let Z = false;",
+    "let U = 0;",
+    "let A = 0;",
+    "function N(F, A) { if (J) X.notFinite(F, A, A); Z = true; return false; }",
+    ...module.declarations,
+    ...functions,
+    `const run = ${run};`,
+    `const holds = [${conditions.join(",\n")}];`,
+    `const compared = [${pairs.join(",\n")}];`,
+    "return {",
+    "run, holds, compared,",
+    "begin: (r0) => { J = true; Z = false; U = r0; A = -1; },",
+    "fuel: () => U,",
+    "at: () => A,",
+    "};",
+  ].join("\n");
+  return { code, sites: module.sites };
+}
+
+/** Graph whose lines are finished ones, read from the frame. */
+function alone(module: ModuleWriter): Graph {
+  const { program, sites } = module;
+  return new Graph(program, sites, (graph, index) =>
+    graph.value({ is: "line", index }, [], program.lines[index]?.type.length ?? null),
+  );
+}
+
+/** Text of a function of the frame; `write` answers what it returns. */
+function writeFunction(
+  module: ModuleWriter,
+  write: (writer: FunctionWriter) => string | null,
+  place = 0,
+): string {
+  const writer = new FunctionWriter(module, place);
+  const result = write(writer);
+  const name = result === null ? null : writer.module.name("r");
+  if (name !== null) writer.top.code.push(`const ${name} = ${result};`);
+  writer.flush(writer.top);
+  return `(F) => {\n${writer.text()}${name === null ? "" : `\nreturn ${name};`}\n}`;
+}
+
+function writeLinesApart(module: ModuleWriter, functions: string[]): string {
+  const names = [...module.program.lines.keys()].map((index) => {
+    const name = module.name("l");
+    const text = writeFunction(module, (writer) => {
+      writeLine(writer, alone(module), index);
+      return null;
+    });
+    functions.push(`const ${name} = ${text};`);
+    return name;
+  });
+  return `(F) => {\n${names.map((name) => `${name}(F);`).join("\n")}\n}`;
+}
+
+/** Writes a line's value into the frame. Lines with special forms are judged apart, so that no solver works on a fault. */
+function writeLine(writer: FunctionWriter, graph: Graph, index: number): Value {
+  const { top } = writer;
+  const line = writer.module.program.lines[index]!;
+  const pending = [...top.judged];
+  const pendingRange = { ...writer.range };
+  if (pending.length === 0) writer.range.from = index;
+  writer.range.to = index;
+  const start = top.code.length;
+  const [forms, faults] = [writer.forms, writer.faults];
+  const value = graph.judge(graph.build(line.expression));
+  if (line.type.length) writeList(writer, value, index, line.type.length);
+  else top.code.push(`F.values[${index}] = ${writer.number(value, top)};`);
+  const before: string[] = [];
+  if (writer.forms > forms) {
+    const own = top.judged.filter((register) => !pending.includes(register));
+    if (pending.length > 0) {
+      const { from, to } = pendingRange;
+      before.push(`if ((${pending.join(" + ")}) * 0 !== 0) X.notFinite(F, ${numberLiteral(from)}, ${to});`);
+    }
+    top.judged = own;
+    writer.range.from = index;
+    writer.flush(top);
+  }
+  if (writer.faults > faults) before.push(`A = ${index};`);
+  top.code.splice(start, 0, ...before);
+  return value;
+}
+
+function writeList(writer: FunctionWriter, value: Value, index: number, length: ListLength): void {
+  const { top } = writer;
+  const room = writer.assign(top, "b", `room(F.values, ${index}, ${writer.length(length)})`);
+  writer.fill(value, room, length);
+  if (value.length) top.registers.set(value.id, room);
+}
