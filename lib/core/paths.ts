@@ -7,6 +7,7 @@ const part = encodeURIComponent;
 export const paths = {
   home: "/",
   signIn: "/sign-in",
+  setUp: "/set-up",
   templates: "/templates",
   template: (slug: string) => `/templates/${part(slug)}`,
   templateRevision: (slug: string, revision: number) => `/templates/${part(slug)}/revisions/${revision}`,

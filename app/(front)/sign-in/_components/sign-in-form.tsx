@@ -23,7 +23,12 @@ export function SignInForm({ target }: { target: string }) {
     setBusy(true);
     setProblem(null);
     try {
-      const reply = await signIn("credentials", { email: data.get("email"), password: data.get("password"), redirect: false, callbackUrl: target });
+      const reply = await signIn("credentials", {
+        email: data.get("email"),
+        password: data.get("password"),
+        redirect: false,
+        callbackUrl: target,
+      });
       if (reply?.ok && !reply.error) {
         router.replace(target);
         router.refresh();
@@ -38,8 +43,23 @@ export function SignInForm({ target }: { target: string }) {
 
   return (
     <form onSubmit={(event) => void submit(event)} className="mt-5">
-      <TextField label="Mail address" name="email" type="email" autoComplete="username" required maxLength={254} autoFocus />
-      <TextField label="Password" name="password" type="password" autoComplete="current-password" required maxLength={256} />
+      <TextField
+        label="Mail address"
+        name="email"
+        type="email"
+        autoComplete="username"
+        required
+        maxLength={254}
+        autoFocus
+      />
+      <TextField
+        label="Password"
+        name="password"
+        type="password"
+        autoComplete="current-password"
+        required
+        maxLength={256}
+      />
       <p role="alert" className="min-h-5 text-fault">
         {problem}
       </p>
