@@ -23,6 +23,7 @@ export const tenEntry: Entry = {
     shift: 0,
     prefixes: [],
     ucum: "10*",
+    codes: ["10^"],
     source: "",
   },
 };

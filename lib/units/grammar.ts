@@ -109,7 +109,10 @@ export function parseProduct(found: readonly Token[], textLength: number): Produ
     const exponent = exponentAfter(token, joinedBelow);
     if (value === 1) return;
     if (!Number.isInteger(ten) || Math.abs(ten) > 30)
-      throw unreadable(token, `${token.text} is a number, and only powers of ten may stand inside a unit.`);
+      throw unreadable(
+        token,
+        `${token.text} is a number. A unit stands here without one; only powers of ten may be part of it.`,
+      );
     push("ten", token, multiplyRational(multiplyRational(outer, rational(ten)), exponent));
   }
 

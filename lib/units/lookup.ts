@@ -11,10 +11,15 @@ export interface Entry {
 const bySign = new Map<string, UnitRow>();
 const byName = new Map<string, UnitRow>();
 const byCode = new Map<string, UnitRow>();
+/** Codes that take a prefix: `cal` alone is the trade's row, with prefix the thermochemical one that UCUM means. */
+const metricByCode = new Map<string, UnitRow>();
 for (const row of units) {
   for (const sign of [row.symbol, ...row.signs]) bySign.set(sign, row);
   for (const name of row.names) byName.set(name, row);
   if (row.ucum !== null) byCode.set(row.ucum, row);
+  for (const code of row.codes) if (!byCode.has(code)) byCode.set(code, row);
+  if (row.prefixes.length > 0 && row.ucum !== null)
+    for (const code of [row.ucum, ...row.codes]) metricByCode.set(code, row);
 }
 
 const allPrefixes: readonly Prefix[] = prefixes;
@@ -48,7 +53,7 @@ export function lookup(word: string): Entry | null {
 /** The unit of a UCUM atom with or without prefix, or null. */
 export function lookupCode(code: string): Entry | null {
   const row = byCode.get(code);
-  return row ? { row, prefix: null } : prefixed(code, codeOf, byCode);
+  return row ? { row, prefix: null } : prefixed(code, codeOf, metricByCode);
 }
 
 /** Every word read without a prefix, for completion and for suggestions. */

@@ -141,10 +141,10 @@ export function parseNumber(text: string): Reading<number> {
     if (!scanned) throw notANumber(text, { start, end });
     if (scanned.end < end) {
       const rest = text.slice(scanned.end, end).trim();
-      throw unreadableNumber(
-        { start: scanned.end, end },
-        `"${rest}" after the number cannot be read as part of it.`,
-      );
+      const message = /^\d/.test(rest)
+        ? `"${text.slice(start, end)}" has blanks that do not separate groups of three digits.`
+        : `"${rest}" after the number cannot be read as part of it.`;
+      throw unreadableNumber({ start: scanned.end, end }, message);
     }
     return { value: scanned.value, notices: [] };
   });

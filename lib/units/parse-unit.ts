@@ -42,7 +42,7 @@ export function parseUnit(text: string, options: ReadOptions = {}): Reading<Unit
     }
     const short = expect ? readShorthand(text, expect, options.shorthand === true) : null;
     if (short) return { value: short.unit, notices: short.notices };
-    if (strict.error) throw strict.error;
+    if (strict.error) throw expect ? withUsualUnits(strict.error, expect) : strict.error;
     throw mismatch(strict.read.unit, expect!, text);
   });
 }
@@ -129,6 +129,13 @@ function readShorthand(text: string, expect: Quantity, allowed: boolean): Assemb
       symbols,
     );
   return { unit: only.unit, notices: [`"${typed}" is read as ${only.unit.symbol}.`, ...only.notices] };
+}
+
+/** Where nothing near is known, what is usual for the quantity is the best help. */
+function withUsualUnits({ fault, final }: ReadError, expect: Quantity): ReadError {
+  if (fault.suggestions.length > 0) return new ReadError(fault, final);
+  const message = `${fault.message} Units of ${expect.name}: ${expect.units.slice(0, 3).join(", ")}.`;
+  return new ReadError({ ...fault, message, suggestions: expect.units }, final);
 }
 
 function refuseDifference(unit: Unit, expect: Quantity, text: string): void {

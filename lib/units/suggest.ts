@@ -5,42 +5,36 @@ interface Explanation {
   readonly suggestions: readonly string[];
 }
 
-/** Words that the trade uses for several units; reading one of them would be a guess. */
-const explanations: ReadonlyMap<string, Explanation> = new Map([
-  [
-    "ton",
-    say('"ton" can be a tonne, a short ton, a long ton or a ton of refrigeration.', [
-      "t",
-      "ton_short",
-      "ton_long",
-      "ton_refrigeration",
-    ]),
-  ],
-  [
-    "tons",
-    say('"tons" can be tonnes, short tons, long tons or tons of refrigeration.', [
-      "t",
-      "ton_short",
-      "ton_long",
-      "ton_refrigeration",
-    ]),
-  ],
-  ["MBTU", say('"MBTU" means 1000 BTU to some and 10⁶ BTU to others.', ["kBTU", "MMBTU"])],
-  ["MBtu", say('"MBtu" means 1000 BTU to some and 10⁶ BTU to others.', ["kBTU", "MMBTU"])],
-  ["Cal", say('"Cal" means a kilocalorie to some and a calorie to others.', ["kcal", "cal"])],
-  ["'", say("The foot mark is not read, because it also means arc minute.", ["ft", "arcmin"])],
-  ["′", say("The foot mark is not read, because it also means arc minute.", ["ft", "arcmin"])],
-  ['"', say("The inch mark is not read, because it also means arc second.", ["in", "arcsec"])],
-  ["″", say("The inch mark is not read, because it also means arc second.", ["in", "arcsec"])],
-  ["USD", say("EUR is the only money here.", ["EUR"])],
-  ["GBP", say("EUR is the only money here.", ["EUR"])],
-  ["$", say("EUR is the only money here.", ["EUR"])],
-  ["£", say("EUR is the only money here.", ["EUR"])],
-  ["R", say('"R" is read as neither röntgen nor Rankine nor gas constant.', ["°R"])],
-]);
+/** Words that the trade uses for several units, where a reading would be a guess, and a few that it has given up. */
+const explanations: ReadonlyMap<string, Explanation> = new Map(
+  explained([
+    [
+      "ton tons",
+      "can be a tonne, a short ton, a long ton or a ton of refrigeration",
+      ["t", "ton_short", "ton_long", "ton_refrigeration"],
+    ],
+    ["MBTU MBtu", "means 1000 BTU to some and 10⁶ BTU to others", ["kBTU", "MMBTU"]],
+    ["Cal Cals", "means a kilocalorie to some and a calorie to others", ["kcal", "cal"]],
+    ["' ′", "is not read, because it means foot to some and arc minute to others", ["ft", "arcmin"]],
+    [`" ″ ''`, "is not read, because it means inch to some and arc second to others", ["in", "arcsec"]],
+    ["USD GBP CHF $ £", "is not converted: EUR is the only money here", ["EUR"]],
+    ["R", "is read neither as Rankine nor as röntgen nor as the gas constant", ["°R"]],
+    ["furlong furlongs chain chains rod rods league leagues", "is not a unit known here", ["m", "ft", "mi"]],
+    ["month months", "has no fixed length", ["d", "a"]],
+  ]),
+);
 
-function say(text: string, suggestions: readonly string[]): Explanation {
-  return { message: `${text} Write ${suggestions.join(" or ")}.`, suggestions };
+function explained(
+  rows: readonly (readonly [words: string, text: string, suggestions: readonly string[]])[],
+): [string, Explanation][] {
+  return rows.flatMap(([words, text, suggestions]) =>
+    words
+      .split(" ")
+      .map((word): [string, Explanation] => [
+        word,
+        { message: `"${word}" ${text}. Write ${suggestions.join(" or ")}.`, suggestions },
+      ]),
+  );
 }
 
 export function explain(word: string): Explanation | null {
@@ -54,13 +48,14 @@ export function nearestUnits(word: string): readonly string[] {
   const typed = word.slice(0, 40);
   const lower = typed.toLowerCase();
   const otherCase = [...caseVariants(typed), ...plainWords.filter((known) => known.toLowerCase() === lower)];
-  const most = typed.length <= 2 ? 1 : typed.length <= 5 ? 2 : 3;
+  if (otherCase.length > 0) return [...new Set(otherCase)].slice(0, mostSuggestions);
+  const most = Math.ceil(typed.length / 3);
   const near = plainWords
     .map((known) => ({ known, distance: editDistance(lower, known.toLowerCase(), most) }))
     .filter(({ known, distance }) => distance <= most && distance < Math.max(known.length, typed.length))
     .sort((a, b) => a.distance - b.distance || a.known.length - b.known.length)
     .map(({ known }) => known);
-  return [...new Set([...otherCase, ...near])].slice(0, mostSuggestions);
+  return [...new Set(near)].slice(0, mostSuggestions);
 }
 
 /** `KG` → kg, `mpa` → MPa and mPa, `Kw` → kW: every spelling with other capitals that is read. */
@@ -68,7 +63,7 @@ function caseVariants(word: string): string[] {
   if (word.length > 6) return [];
   let variants = [""];
   for (const letter of word) {
-    const spellings = [...new Set([letter, letter.toLowerCase(), letter.toUpperCase()])];
+    const spellings = [...new Set([letter.toLowerCase(), letter, letter.toUpperCase()])];
     variants = variants.flatMap((begin) => spellings.map((spelling) => begin + spelling));
   }
   return variants.filter((variant) => lookup(variant) !== null);

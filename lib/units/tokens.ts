@@ -90,9 +90,9 @@ function nextToken(
   const raised = match(superscripts, text, at);
   if (raised !== "") return token("superscript", raised.length, plainSuperscript(raised));
   if (text.startsWith("**", at)) return token("power", 2, "^");
-  const sign = text.charAt(at);
+  const sign = String.fromCodePoint(text.codePointAt(at) ?? 0);
   if (/[-−‐‑–]/.test(sign)) return hyphen(text, at, token);
-  return token(signs.get(sign) ?? "other", text.codePointAt(at)! > 0xffff ? 2 : 1, sign);
+  return token(signs.get(sign) ?? "other", sign.length, sign);
 }
 
 /** `ft-lb` is a product, `m-1` a negative power, `-` alone stands for "no unit". */

@@ -89,7 +89,13 @@ export function readUcum(code: string): Assembled {
       { start: at, end: at + 1 },
       `"${code.charAt(at)}" has no meaning at this place of a UCUM code.`,
     );
-  return assemble(terms);
+  return assemble(terms.length > 1 ? terms.map(asTyped) : terms);
+}
+
+/** `[degR]` in a product is the step that engineers write `°F`. */
+function asTyped(term: Term): Term {
+  const step = term.entry.row.ucum === "[degR]" ? lookupCode("[degF]") : null;
+  return step ? { ...term, entry: step } : term;
 }
 
 /** Reads a UCUM code, annotations tolerated. Codes with a zero of their own (`[degF]`, `Cel`) are read in products too. */

@@ -36,7 +36,7 @@ export const electricalUnits: readonly UnitRow[] = [
   ]),
   ...unitRows({ mass: 1, time: -2, [current]: -1 }, [
     ["T",    "",        "tesla",          "1",         downward,                   "T",   SI],
-    ["G",    "",        "gauss",          "1e-4",      ["k", "m", "µ"],            "G",   NIST],
+    ["G",    "",        "gauss",          "1e-4",      ["m", "µ"],            "G",   NIST],
   ]),
   ...unitRows({ [current]: 1, length: -1 }, [
     ["Oe",   "",        "oersted",        "1000/4/pi", ["k", "m"],                 "Oe",  NIST],

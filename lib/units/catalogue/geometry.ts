@@ -19,7 +19,7 @@ const length = unitRows({ length: 1 }, [
   ["mil",      "thou",           "",                         "0.0000254",       none,         "[mil_i]",  YARD],
   ["fathom",   "",               "",                         "1.8288",          none,         "[fth_i]",  YARD],
   ["nmi",      "",               "nauticalmile",             "1852",            none,         "[nmi_i]",  SI],
-  ["au",       "",               "",                         "149597870700",    none,         "AU",       IAU],
+  ["au",       "",               "",                         "149597870700",    none,         null,       IAU],
 ]);
 
 // prettier-ignore
@@ -37,7 +37,7 @@ const area = unitRows({ length: 2 }, [
 
 // prettier-ignore
 const volume = unitRows({ length: 3 }, [
-  ["L",        "l ℓ",            "litre liter",              "0.001",           litrePrefixes, "L",       SI],
+  ["L",        "l ℓ",            "litre liter",              "0.001",           litrePrefixes, "L",       SI, { codes: ["l"] }],
   ["cc",       "ccm",            "",                         "1e-6",            none,         null,       COMMON],
   ["cuin",     "",               "",                         "0.000016387064",  none,         "[cin_i]",  YARD],
   ["cuft",     "",               "",                         "0.028316846592",  none,         "[cft_i]",  YARD],
@@ -60,7 +60,7 @@ const time = unitRows({ time: 1 }, [
   ["h",        "hr hrs",         "hour",                     "3600",            none,         "h",        SI, { notice: "h is the hour." }],
   ["d",        "",               "day",                      "86400",           none,         "d",        SI],
   ["wk",       "",               "week",                     "604800",          none,         "wk",       NIST],
-  ["a",        "yr",             "year",                     "31557600",        none,         "a",        ISO, { notice: "a is a year of 365.25 d." }],
+  ["a",        "yr",             "year",                     "31557600",        none,         "a",        ISO, { codes: ["a_j"], notice: "a is a year of 365.25 d." }],
 ]);
 
 // prettier-ignore

@@ -5,6 +5,7 @@ import { mechanicsUnits } from "./mechanics";
 import { otherUnits } from "./other";
 import type { UnitRow } from "./row";
 import { temperatureUnits } from "./temperature";
+import { ucumOnlyUnits } from "./ucum-only";
 
 /** Every unit of the catalogue. */
 export const units: readonly UnitRow[] = [
@@ -14,4 +15,5 @@ export const units: readonly UnitRow[] = [
   ...heatUnits,
   ...electricalUnits,
   ...otherUnits,
+  ...ucumOnlyUnits,
 ];

@@ -51,13 +51,13 @@ const force = unitRows({ mass: 1, length: 1, time: -2 }, [
 // prettier-ignore
 const pressure = unitRows({ mass: 1, length: -1, time: -2 }, [
   ["Pa",        "",               "pascal",           "1",               metric,       "Pa",        SI],
-  ["bar",       "bara",           "",                 "100000",          ["k", "m", "µ"], "bar",    SI],
+  ["bar",       "bara",           "bar",              "100000",          ["k", "m", "µ"], "bar",    SI],
   ["psi",       "psia",           "",                 "0.45359237*9.80665/0.00064516", none, "[psi]", NIST],
-  ["ksi",       "kpsi",           "",                 "453.59237*9.80665/0.00064516",  none, "10*3.[psi]", NIST],
+  ["ksi",       "kpsi",           "",                 "453.59237*9.80665/0.00064516",  none, "10*3.[psi]", NIST, { codes: ["k[psi]"] }],
   ["psf",       "",               "",                 "0.45359237*9.80665/0.09290304", none, null,  NIST],
   ["atm",       "",               "atmosphere",       "101325",          none,         "atm",       SI],
   ["at",        "ata",            "",                 "98066.5",         none,         "att",       NIST, { notice: "at is the technical atmosphere, 1 kgf/cm²." }],
-  ["Torr",      "torr",           "",                 "101325/760",      milli,        null,        NIST],
+  ["Torr",      "torr",           "torr",             "101325/760",      milli,        null,        NIST],
   ["mmHg",      "",               "",                 "133.322387415",   none,         null,        NIST],
   ["cmHg",      "",               "",                 "1333.22387415",   none,         null,        NIST],
   ["inHg",      "",               "",                 "3386.388640341",  none,         null,        NIST],

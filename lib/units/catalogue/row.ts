@@ -17,6 +17,8 @@ export interface UnitRow {
   readonly prefixes: readonly PrefixSymbol[];
   /** UCUM code, may be an expression such as `W.h`; null where UCUM has none of exactly this size. */
   readonly ucum: string | null;
+  /** Further UCUM codes of exactly this size, read only. */
+  readonly codes: readonly string[];
   /** Where the definition stands. */
   readonly source: string;
   /** Said at each echo, where the same text means something else elsewhere. */
@@ -26,7 +28,7 @@ export interface UnitRow {
   readonly alone?: true;
 }
 
-type Extras = Partial<Pick<UnitRow, "notice" | "shift" | "differenceOnly" | "alone">>;
+type Extras = Partial<Pick<UnitRow, "notice" | "shift" | "codes" | "differenceOnly" | "alone">>;
 
 /**
  * symbol, other signs (blank-separated), names (singular, blank-separated), exact definition in coherent SI units,
@@ -61,6 +63,7 @@ export function unitRows(
     shift: 0,
     prefixes,
     ucum,
+    codes: [],
     source,
     ...extras,
   }));
