@@ -9,7 +9,7 @@ import { buildRequest, fieldOfPointer } from "./build-request";
 import { ChoiceInput } from "./choice-input";
 import { FigurePane } from "./figure-pane";
 import { initialValues, type FieldState, type FormValues } from "./form-state";
-import { LimitsPane } from "./limits-pane";
+import { LimitsPane } from "@/app/_components/run/limits-pane";
 import { MaterialInput } from "./material-input";
 import { NumberInput } from "./number-input";
 import { PhoneBar } from "./phone-bar";
@@ -17,7 +17,7 @@ import { ResultsPane } from "./results-pane";
 import { RunActions } from "./run-actions";
 import { TableInput } from "./table-input";
 import { useEvaluation } from "./use-evaluation";
-import { WorkingTable, type WorkingRow } from "./working-table";
+import { WorkingTable, type WorkingRow } from "@/app/_components/run/working-table";
 
 /** A material as the picker shows it. */
 export interface MaterialChoice {

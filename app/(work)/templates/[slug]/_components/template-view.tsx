@@ -9,7 +9,7 @@ import { installation } from "@/lib/people/installation";
 import type { RevisionView } from "@/lib/templates/schemas";
 import { categoryNames } from "../../_components/category-names";
 import { materialChoices } from "../material-choices";
-import { typesetWorking } from "../typeset";
+import { typesetWorking } from "@/app/_components/run/typeset";
 import type { FormValues } from "./form-state";
 import { RunDesk } from "./run-desk";
 

@@ -3,7 +3,7 @@ import katex from "katex";
 import type { Definition } from "@/lib/calculation/definition";
 import { checkDefinition } from "@/lib/calculation/program";
 import { expressionLatex, symbolLatex } from "@/lib/sheet/latex";
-import type { WorkingRow } from "./_components/working-table";
+import type { WorkingRow } from "./working-table";
 
 /** The working of a definition as KaTeX markup, one row a statement. */
 export function typesetWorking(definition: Definition): WorkingRow[] {
