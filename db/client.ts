@@ -73,7 +73,7 @@ export function writeClient(): Client {
 export async function prepareConnections(): Promise<void> {
   const { url, writeClient: client } = connections();
   if (!url.startsWith("file:")) return;
-  await retryWhileBusy(() => client.execute("PRAGMA journal_mode = WAL"));
+  await retryWhileBusy(client, () => client.execute("PRAGMA journal_mode = WAL"));
   for (const [pragma, wanted] of [
     ["journal_mode", "wal"],
     ["synchronous", 2],

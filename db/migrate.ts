@@ -24,12 +24,13 @@ export async function migrateDatabase(): Promise<boolean> {
   await takeLease(holder);
   try {
     const before = await appliedMigration();
-    await migrate(writer(), {
-      migrationsFolder: path.join(/* turbopackIgnore: true */ process.cwd(), "db", "migrations"),
-    });
+    const migrationsFolder = path.join(/* turbopackIgnore: true */ process.cwd(), "db", "migrations");
+    await retryWhileBusy(writeClient(), () => migrate(writer(), { migrationsFolder }), patience);
     return (await appliedMigration()) !== before;
   } finally {
-    await writeClient().execute({ sql: "DELETE FROM migration_lease WHERE holder = ?", args: [holder] });
+    await retryWhileBusy(writeClient(), () =>
+      writeClient().execute({ sql: "DELETE FROM migration_lease WHERE holder = ?", args: [holder] }),
+    );
   }
 }
 
@@ -47,7 +48,7 @@ export async function appliedMigration(): Promise<number> {
 
 async function takeLease(holder: string): Promise<void> {
   const deadline = Date.now() + patience;
-  while (!(await retryWhileBusy(() => claim(holder), patience))) {
+  while (!(await retryWhileBusy(writeClient(), () => claim(holder), patience))) {
     if (Date.now() > deadline) {
       throw new Error(
         "Another process has been migrating this database for two minutes. Look whether it still runs.",

@@ -1,7 +1,7 @@
 import "server-only";
 import { CodedError } from "@/lib/core/errors";
 import { log } from "@/lib/core/log";
-import { writer, type Tx } from "./client";
+import { writeClient, writer, type Tx } from "./client";
 import { isBusy, isStorageFault } from "./faults";
 import { retryWhileBusy } from "./retry";
 
@@ -29,7 +29,7 @@ const largestGroup = 32;
 
 /**
  * Runs `work` in a write transaction and answers its value once that is on the disk. Errors of `work` undo its own
- * changes and are passed on. Throws CodedError `busy` when another process holds the lock for 5 s, or when the disk
+ * changes and are passed on. `work` may run again when the transaction was undone for a foreign lock. Throws CodedError `busy` when another process holds the lock for 5 s, or when the disk
  * is full or read-only.
  */
 export function write<T>(work: (tx: Tx) => Promise<T>): Promise<T> {
@@ -51,29 +51,45 @@ async function drain(): Promise<void> {
 
 async function commitGroup(group: Job[]): Promise<void> {
   const outcomes: (() => void)[] = [];
+  let fault: unknown;
   try {
     // Only the beginning of a transaction meets a foreign lock: it takes the write lock at once (BEGIN IMMEDIATE).
-    await retryWhileBusy(() =>
+    await retryWhileBusy(writeClient(), () =>
       writer().transaction(async (tx) => {
-        for (const job of group) outcomes.push(await runInSavepoint(tx, job));
+        outcomes.length = 0;
+        for (const job of group) {
+          const outcome = await runInSavepoint(tx, job);
+          if ("fault" in outcome) throw (fault = outcome.fault);
+          outcomes.push(outcome.settle);
+        }
       }),
     );
   } catch (error) {
-    const reason = unwritable(error);
+    // After a fault of the storage the library's own undoing fails, too, and would hide the reason.
+    const reason = unwritable(fault ?? error);
     for (const job of group) job.reject(reason);
     return;
   }
   for (const settle of outcomes) settle();
 }
 
-async function runInSavepoint(tx: Tx, job: Job): Promise<() => void> {
+/** `fault` when the whole transaction is gone with the job, and so are the earlier jobs of the group. */
+async function runInSavepoint(tx: Tx, job: Job): Promise<{ settle: () => void } | { fault: unknown }> {
+  let own: unknown;
   try {
-    const value = await tx.transaction(job.work);
-    return () => job.resolve(value);
+    const value = await tx.transaction(async (savepoint) => {
+      try {
+        return await job.work(savepoint);
+      } catch (error) {
+        own = error;
+        throw error;
+      }
+    });
+    return { settle: () => job.resolve(value) };
   } catch (error) {
-    // With a fault of the storage the whole transaction is gone, and so are the earlier jobs of the group.
-    if (isStorageFault(error)) throw error;
-    return () => job.reject(error);
+    const reason = own ?? error;
+    if (isStorageFault(reason) || reason !== error) return { fault: reason };
+    return { settle: () => job.reject(reason) };
   }
 }
 

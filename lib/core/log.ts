@@ -7,12 +7,16 @@ type Level = "info" | "warn" | "error";
 
 const secretName = /pass(word|code)?$|secret|token|cookie|authorization|^key$|setUpCode/i;
 
+/** Drizzle writes the values of a failed statement into its message; they are not for the log. */
+const withoutValues = (text: string) =>
+  text.replace(/\nparams: [^]*?(?=\n +at |$)/, "\nparams: [not logged]");
+
 function plain(value: unknown, depth: number): unknown {
   if (value instanceof Error) {
     return {
       name: value.name,
-      message: value.message,
-      stack: value.stack,
+      message: withoutValues(value.message),
+      stack: withoutValues(value.stack ?? ""),
       cause: plain(value.cause, depth + 1),
     };
   }

@@ -1,5 +1,6 @@
 import type { z } from "zod";
 import { CodedError, type FieldProblem } from "./errors";
+import { pointerTo } from "./problem";
 
 /** Reads `input` with a schema; throws CodedError with every problem and its place in the input. */
 export function parseInput<S extends z.ZodType>(schema: S, input: unknown): z.output<S> {
@@ -7,7 +8,7 @@ export function parseInput<S extends z.ZodType>(schema: S, input: unknown): z.ou
   if (parsed.success) return parsed.data;
   throw CodedError.from(
     parsed.error.issues.map((issue): FieldProblem => ({
-      pointer: `#${issue.path.map((part) => `/${String(part).replaceAll("~", "~0").replaceAll("/", "~1")}`).join("")}`,
+      pointer: pointerTo(...issue.path),
       code: issue.code === "unrecognized_keys" ? "unknown-member" : "invalid-input",
       message: issue.message,
     })),
