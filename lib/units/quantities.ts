@@ -1,16 +1,13 @@
 import { units } from "./catalogue";
 import { quantityRows } from "./catalogue/quantities";
 import { dimensionKey, isTemperature } from "./dimension";
-import { parseUnit } from "./parse-unit";
+import { knownUnits } from "./known-units";
+import { readUnit } from "./read-unit";
 import { rational, rationalText } from "./rational";
 import { baseQuantities, type Dimension, type Quantity, type ScaleKind, type Unit } from "./types";
 
-/** A unit written in our own tables; a fault in it is a fault of the table. */
-function tableUnit(text: string): Unit {
-  const read = parseUnit(text);
-  if (!read.ok) throw new TypeError(`The table of quantities names ${text}: ${read.fault.message}`);
-  return read.value;
-}
+/** A unit written in our own tables. */
+const tableUnit = (text: string): Unit => (knownUnits.get(text) ?? readUnit(text)).unit;
 
 /** Every quantity, the preferred one of a dimension before its like. */
 export const quantities: readonly Quantity[] = quantityRows.map(([name, offered, range, kind]) => {

@@ -16,7 +16,7 @@ const energy = unitRows({ mass: 1, length: 2, time: -2 }, [
   ["cal",    "",                       "calorie",         "4.184",          none,      "cal",     NIST, { notice: CAL }],
   ["cal_th", "",                       "calorie_th",      "4.184",          kiloMega,  "cal_th",  NIST, { codes: ["cal"] }],
   ["cal_IT", "",                       "cal_IT calorie_IT", "4.1868",       kiloMega,  "cal_IT",  IT],
-  ["cal_15", "",                       "",                "4.1855",         none,      null,      NIST],
+  ["cal_15", "",                       "",                "4.1858",         none,      null,      NIST],
   ["kcal",   "",                       "kilocalorie",     "4186.8",         none,      "kcal_IT", IT, { notice: KCAL }],
   ["Mcal",   "",                       "",                "4186800",        none,      "Mcal_IT", IT, { notice: "Mcal is 1000 kcal of 4186.8 J (International Table)." }],
   ["Gcal",   "",                       "",                "4186800000",     none,      "Gcal_IT", IT, { notice: "Gcal is 10⁶ kcal of 4186.8 J (International Table)." }],

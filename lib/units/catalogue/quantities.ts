@@ -55,7 +55,7 @@ export const quantityRows: readonly QuantityRow[] = [
   ["thermal transmittance",           "W/(m²·K) BTU/(h·ft²·°F) kcal/(h·m²·°C)",              [0.05, 10]],
   ["linear thermal transmittance",    "W/(m·K) BTU/(h·ft·°F)",                               [0, 10]],
   ["thermal insulance",               "m²·K/W cm²·K/W mm²·K/W ft²·°F·h/BTU clo tog m²·h·°C/kcal", [1e-7, 100]],
-  ["thermal resistance",              "K/W mK/W °C/W °F·h/BTU h·°C/kcal",                    [1e-5, 1e5]],
+  ["thermal resistance",              "K/W °C/W °F·h/BTU h·°C/kcal",                    [1e-5, 1e5]],
   ["linear thermal resistance",       "m·K/W cm·K/W ft·°F·h/BTU m·h·°C/kcal",                [1e-4, 1000]],
   ["thermal conductance",             "W/K mW/K kW/K BTU/(h·°F)",                            [0, 1e6]],
   ["thermal diffusivity",             "m²/s mm²/s cm²/s m²/h ft²/h ft²/s",                   [1e-8, 1e-3]],
