@@ -20,7 +20,7 @@ export function testSettings(file: string): Record<string, string> {
  * One temporary file database with the real migrations for a test file. Call it at the top of the file; the path is
  * there from the first hook on.
  */
-export function useDatabase(more: Record<string, string> = {}): { readonly file: string } {
+export function testDatabase(more: Record<string, string> = {}): { readonly file: string } {
   const folder = mkdtempSync(path.join(tmpdir(), "coldface-test-"));
   const file = path.join(folder, "test.db");
   Object.assign(process.env, testSettings(file), more);

@@ -3,11 +3,11 @@ import { writeClient } from "@/db/client";
 import { write } from "@/db/tx";
 import { appendAudit } from "@/lib/audit/append";
 import { verifyChain } from "@/lib/audit/verify-chain";
-import { useDatabase } from "../factories/database";
+import { testDatabase } from "../factories/database";
 import { system } from "../factories/people";
 import { unique } from "../factories/unique";
 
-useDatabase();
+testDatabase();
 
 const append = (object: string) =>
   write((tx) =>

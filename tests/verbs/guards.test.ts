@@ -5,11 +5,11 @@ import { templateRevisions } from "@/db/schema/templates";
 import { write } from "@/db/tx";
 import type { RevisionState } from "@/db/vocabulary";
 import { appendAudit } from "@/lib/audit/append";
-import { useDatabase } from "../factories/database";
+import { testDatabase } from "../factories/database";
 import { system } from "../factories/people";
 import { makeRevision, revisionRow } from "../factories/revisions";
 
-useDatabase();
+testDatabase();
 
 /** What somebody with a database tool would do, past every verb. */
 const raw = (sql: string, args: (string | number)[] = []) => writeClient().execute({ sql, args });

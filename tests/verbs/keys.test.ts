@@ -11,10 +11,10 @@ import { hmac } from "@/lib/core/crypto";
 import { createKey } from "@/lib/people/create-key";
 import { listKeys } from "@/lib/people/list-keys";
 import { revokeKey } from "@/lib/people/revoke-key";
-import { useDatabase } from "../factories/database";
+import { testDatabase } from "../factories/database";
 import { deactivate, makeKeyOf, makePerson } from "../factories/people";
 
-useDatabase({ TRUSTED_PROXIES: "1", KEY_SECRET_OLDER: "former-key-secret-of-the-tests-0123456789" });
+testDatabase({ TRUSTED_PROXIES: "1", KEY_SECRET_OLDER: "former-key-secret-of-the-tests-0123456789" });
 
 const row = async (id: string) => (await reader().select().from(keys).where(eq(keys.id, id)))[0];
 const change = (id: string, values: Partial<typeof keys.$inferInsert>) =>

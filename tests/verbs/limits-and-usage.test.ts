@@ -8,11 +8,11 @@ import { write } from "@/db/tx";
 import { takeToken, takeTokens } from "@/lib/access/rate-limit";
 import { enqueue } from "@/lib/outbox/enqueue";
 import { countUsage, flushUsage } from "@/lib/usage/count";
-import { useDatabase } from "../factories/database";
+import { testDatabase } from "../factories/database";
 import { keyActor, personActor, system } from "../factories/people";
 import { unique } from "../factories/unique";
 
-const database = useDatabase();
+const database = testDatabase();
 
 afterEach(() => {
   vi.useRealTimers();

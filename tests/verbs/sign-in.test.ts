@@ -12,11 +12,11 @@ import { authOptions } from "@/lib/people/auth-options";
 import { needsFirstPerson, setUpCode, setUpFirstPerson } from "@/lib/people/set-up-first-person";
 import { signIn } from "@/lib/people/sign-in";
 import { signOut } from "@/lib/people/sign-out";
-import { useDatabase } from "../factories/database";
+import { testDatabase } from "../factories/database";
 import { deactivate, goodPassword, makePerson } from "../factories/people";
 import { unique } from "../factories/unique";
 
-useDatabase();
+testDatabase();
 
 const cookieOf = async (sessionId: string) =>
   `coldface.session=${await encode({ token: { sid: sessionId }, secret: env().AUTH_SECRET })}`;

@@ -8,10 +8,10 @@ import { isUniqueViolation } from "@/db/faults";
 import { migrateDatabase } from "@/db/migrate";
 import { settings } from "@/db/schema/system";
 import { write } from "@/db/tx";
-import { useDatabase } from "../factories/database";
+import { testDatabase } from "../factories/database";
 import { unique } from "../factories/unique";
 
-const database = useDatabase();
+const database = testDatabase();
 
 const keep = (key: string, value = "1") => write((tx) => tx.insert(settings).values({ key, value }));
 const kept = async (key: string) =>
