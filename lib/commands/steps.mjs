@@ -109,9 +109,9 @@ export function build() {
   writeFileSync(stamp, wanted);
 }
 
-/** Runs one of the TypeScript commands of this folder. */
+/** Runs one of the TypeScript commands of this folder, as server code (`server-only` refuses to load otherwise). */
 export function command(name, args = []) {
-  run(at("node_modules", "tsx", "dist", "cli.mjs"), [at("lib", "commands", `${name}.ts`), ...args], `The step "${name}" failed; the lines above say why.`);
+  run(at("node_modules", "tsx", "dist", "cli.mjs"), ["--conditions=react-server", at("lib", "commands", `${name}.ts`), ...args], `The step "${name}" failed; the lines above say why.`);
 }
 
 export function dataFolder() {
