@@ -93,7 +93,7 @@ function handler(operation: Operation, admit: (request: Request) => Promise<Admi
         request,
         mark,
         status: reply.status,
-        headers: { ...limits, ...reply.headers },
+        headers: { ...limits, ...reply.headers, ...nextLink(url, reply.nextCursor) },
         etag: operation.etag ?? false,
       });
     } catch (thrown) {
@@ -116,6 +116,21 @@ interface WrittenReply {
   readonly status: number;
   readonly text: string;
   readonly headers: HeaderValues;
+  /** Of a list that goes on. */
+  readonly nextCursor: string | null;
+}
+
+/** Link to the next page (RFC 8288): the same address and query with the next cursor. */
+function nextLink(url: URL, nextCursor: string | null): HeaderValues {
+  if (nextCursor === null) return {};
+  const query = new URLSearchParams(url.searchParams);
+  query.set("cursor", nextCursor);
+  return { Link: `<${url.pathname}?${query.toString()}>; rel="next"` };
+}
+
+function cursorOf(body: unknown): string | null {
+  const page = body as { nextCursor?: unknown } | null;
+  return typeof page?.nextCursor === "string" ? page.nextCursor : null;
 }
 
 function written(operation: Operation, result: unknown): WrittenReply {
@@ -125,6 +140,7 @@ function written(operation: Operation, result: unknown): WrittenReply {
     status: operation.reply.status,
     text: JSON.stringify(presented.body),
     headers: presented.headers ?? {},
+    nextCursor: cursorOf(presented.body),
   };
 }
 
@@ -146,7 +162,7 @@ async function perform(
 
 function fromStored(reply: StoredReply): WrittenReply {
   const headers: Record<string, string> = reply.location === null ? {} : { Location: reply.location };
-  return { status: reply.status, text: reply.text, headers };
+  return { status: reply.status, text: reply.text, headers, nextCursor: null };
 }
 
 async function performOnce(

@@ -12,18 +12,13 @@ import { now } from "@/lib/core/clock";
 import { CodedError, type FieldProblem } from "@/lib/core/errors";
 import { nearestName } from "@/lib/core/nearest";
 import { pointerTo } from "@/lib/core/problem";
-import { lifecycleOf, revisionToRun, type Lifecycle } from "@/lib/templates/find-revision";
+import { lifecycleOf, revisionToRun } from "@/lib/templates/find-revision";
 import { requestOf, runRevision } from "@/lib/templates/run-revision";
 import { countUsage } from "@/lib/usage/count";
 import { recordDigest } from "./digest";
 import { recordName } from "./record-number";
-import type { CreateRecordBody, RecordView } from "./schemas";
+import type { CreateRecordBody, KeptRecord } from "./schemas";
 import { freshRecordView, type KeptRequest } from "./view";
-
-export interface KeptRecord {
-  record: RecordView;
-  lifecycle: Lifecycle;
-}
 
 /** Runs a template and keeps the run with everything needed to repeat it. Answers after the commit. */
 export async function createRecord(

@@ -4,6 +4,7 @@ import { Slug } from "@/lib/calculation/definition";
 import { GivenInputs, Origin, RunRequest, Status, TemplateEvaluation } from "@/lib/calculation/evaluation";
 import { pageQuery } from "@/lib/core/paging";
 import { orNull, RevisionNumber } from "@/lib/materials/schemas";
+import type { Lifecycle } from "@/lib/templates/schemas";
 
 /** Shapes of what records are asked and what they answer. */
 
@@ -109,6 +110,12 @@ export const Rerun = z.object({
   after: TemplateEvaluation,
   deviations: z.array(Deviation),
 });
+
+/** A record just kept, and how the revision used stands. */
+export interface KeptRecord {
+  record: RecordView;
+  lifecycle: Lifecycle;
+}
 
 export type CreateRecordBody = z.infer<typeof CreateRecordBody>;
 export type GivenRequest = z.infer<typeof GivenRequest>;

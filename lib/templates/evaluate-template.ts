@@ -1,15 +1,11 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
-import type { RunRequest, TemplateEvaluation } from "@/lib/calculation/evaluation";
+import type { RunRequest } from "@/lib/calculation/evaluation";
 import { plainCall, type Call } from "@/lib/core/call";
 import { countUsage } from "@/lib/usage/count";
-import { lifecycleOf, revisionToRun, type Lifecycle } from "./find-revision";
+import { lifecycleOf, revisionToRun } from "./find-revision";
 import { requestOf, runRevision } from "./run-revision";
-
-export interface Evaluated {
-  evaluation: TemplateEvaluation;
-  lifecycle: Lifecycle;
-}
+import type { Evaluated } from "./schemas";
 
 /** Runs a template and keeps nothing: the issued revision, or the numbered one. */
 export async function evaluateTemplate(

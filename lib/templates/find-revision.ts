@@ -7,6 +7,7 @@ import { visibleStates } from "@/lib/access/actions";
 import type { Actor } from "@/lib/access/actor";
 import { permit, type Permitted } from "@/lib/access/permit";
 import { CodedError } from "@/lib/core/errors";
+import type { Lifecycle } from "./schemas";
 
 /** What a run has to know of a revision; the definition itself comes from the cache. */
 export interface RunnableRevision {
@@ -77,15 +78,6 @@ function withdrawn(revision: RunnableRevision): CodedError {
     [],
     { withdrawal: { at, reason } },
   );
-}
-
-/** How a revision stands on its way out of use, for the caller's warning. */
-export interface Lifecycle {
-  slug: string;
-  supersededAt: Date | null;
-  withdrawalDate: Date | null;
-  /** The issued revision that replaced it. */
-  successor: number | null;
 }
 
 export async function lifecycleOf(revision: RunnableRevision): Promise<Lifecycle> {

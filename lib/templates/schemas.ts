@@ -1,7 +1,7 @@
 import { z } from "zod";
 import { revisionStates } from "@/db/vocabulary";
 import { categories, Definition, Slug } from "@/lib/calculation/definition";
-import { Evaluation, RunRequest, Status } from "@/lib/calculation/evaluation";
+import { Evaluation, RunRequest, Status, type TemplateEvaluation } from "@/lib/calculation/evaluation";
 import { pageQuery } from "@/lib/core/paging";
 import { FaultOfRow } from "@/lib/core/problem";
 import { Named, orNull, RevisionMembers, RevisionNumber } from "@/lib/materials/schemas";
@@ -121,6 +121,64 @@ export const DefinitionEvaluation = z.object({
   ...Evaluation.shape,
 });
 
+// ───────────────────────────── units and functions
+
+export const QuantityPage = z.object({
+  items: z.array(
+    z.object({
+      name: z.string(),
+      /** Whether °C and °F are temperatures, differences, or neither. */
+      kind: z.enum(["absolute", "difference", "plain"]),
+      unit: z.string(),
+      units: z.array(z.object({ unit: z.string(), ucum: orNull(z.string()) })),
+    }),
+  ),
+  nextCursor: orNull(z.string()),
+});
+export const FunctionPage = z.object({
+  items: z.array(
+    z.object({
+      name: z.string(),
+      kind: z.enum(["function", "special form"]),
+      parameters: z.array(z.string()),
+      /** The last parameter may be repeated. */
+      variadic: z.boolean(),
+      help: z.string(),
+      source: z.string().optional(),
+    }),
+  ),
+  constants: z.array(
+    z.object({
+      name: z.string(),
+      /** In the coherent SI unit beside it. */
+      value: z.number(),
+      unit: z.string(),
+      help: z.string(),
+      source: z.string(),
+    }),
+  ),
+  nextCursor: orNull(z.string()),
+});
+
+/** How a revision stands on its way out of use, for the caller's warning. */
+export interface Lifecycle {
+  slug: string;
+  supersededAt: Date | null;
+  withdrawalDate: Date | null;
+  /** The issued revision that replaced it. */
+  successor: number | null;
+}
+export interface Evaluated {
+  evaluation: TemplateEvaluation;
+  lifecycle: Lifecycle;
+}
+export interface EvaluatedRows {
+  evaluation: RowsEvaluation;
+  lifecycle: Lifecycle;
+}
+
+export type QuantityPage = z.infer<typeof QuantityPage>;
+export type FunctionPage = z.infer<typeof FunctionPage>;
 export type RevisionSummary = z.infer<typeof RevisionSummary>;
 export type RevisionView = z.infer<typeof RevisionView>;
 export type TemplateItem = z.infer<typeof TemplateItem>;
