@@ -3,3 +3,4 @@ export { languageConstants, languageFunctions, reservedWords, specialForms } fro
 export type { ConstantRow, FunctionRow, SpecialFormName, SpecialFormRow, TypeRule } from "./functions";
 export { limits } from "./limits";
 export { parseExpression, parseWorking } from "./parse";
+export { checkProgram } from "./check/program";

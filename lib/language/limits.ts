@@ -13,6 +13,8 @@ export const limits = {
   /** Levels of the syntax tree, through the functions that call each other. */
   depth: 1_000,
   specialFormDepth: 3,
+  /** Highest order of a Bessel function: it costs time in proportion. */
+  besselOrder: 100,
   /** Largest numerator or denominator of an exponent of a dimension. */
   exponent: 1_000,
 } as const;
