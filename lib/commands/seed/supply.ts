@@ -32,7 +32,7 @@ function revisionOne(item: Supplied, adoptedBy: string[] | null) {
   return {
     id: newId("rev"),
     number: 1,
-    state: "issued",
+    state: "issued" as const,
     title: item.title,
     definition: item.definition,
     definitionHash: item.definitionHash,
@@ -51,7 +51,7 @@ function revisionOne(item: Supplied, adoptedBy: string[] | null) {
     adoptedBy,
     verifyBy: after(at, verifyWithin),
     supplied: true,
-  } as const;
+  };
 }
 
 export async function supplyTemplate(tx: Tx, item: Supplied, adoptedBy: string[] | null): Promise<Outcome> {
