@@ -1,0 +1,3 @@
+import { unknownAddress } from "@/lib/http/route";
+
+export const { GET, HEAD, POST, PUT, PATCH, DELETE, OPTIONS } = unknownAddress;

@@ -1,0 +1,8 @@
+import { endpoint } from "@/lib/http/endpoint";
+import { route } from "@/lib/http/route";
+import { listFunctions } from "@/lib/templates/list-catalogue";
+import * as operations from "@/openapi/operations/catalogue";
+
+export const { GET, HEAD, POST, PUT, PATCH, DELETE, OPTIONS } = route({
+  GET: endpoint(operations.listFunctions, listFunctions),
+});

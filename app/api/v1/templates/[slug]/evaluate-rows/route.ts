@@ -1,0 +1,8 @@
+import { endpoint } from "@/lib/http/endpoint";
+import { route } from "@/lib/http/route";
+import { evaluateRows } from "@/lib/templates/evaluate-rows";
+import * as operations from "@/openapi/operations/runs";
+
+export const { GET, HEAD, POST, PUT, PATCH, DELETE, OPTIONS } = route({
+  POST: endpoint(operations.evaluateTemplateRows, evaluateRows),
+});
