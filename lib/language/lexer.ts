@@ -30,7 +30,8 @@ const patterns = (): Patterns => ({
   name: /[A-Za-z][A-Za-z0-9_]*/y,
   text: /"([^"]*)"/y,
   foreignText: /'([^']*)'|[“”„]([^“”„"]*)[“”"]/y,
-  sign: /==|!=|<=|>=|[-+*/^<>?:(),.=]/y,
+  // Not where a sign of another language begins: `**`, `//`, `:=`, `===`, `<>`.
+  sign: /[-+^?(),.]|\*(?!\*)|\/(?![/*])|:(?!=)|[<>!=]=(?!=)|<(?!>)|>|=(?![=<])/y,
   foreignWord: /[\p{L}\p{M}]+[\p{L}\p{M}\p{N}_]*/uy,
 });
 
@@ -104,10 +105,9 @@ class LineLexer {
     if (name) return this.name(name[0], from);
     const text = this.match(this.patterns.text);
     if (text) return this.quoted(text[1] ?? "", from);
-    if (this.foreign(from)) return;
     const sign = this.match(this.patterns.sign);
     if (sign) return this.push(kindOfSign[sign[0]] ?? "operator", sign[0], from);
-    this.unknown(from);
+    if (!this.foreign(from)) this.unknown(from);
   }
 
   private number(text: string, from: number): void {
@@ -179,7 +179,7 @@ class LineLexer {
       });
       return true;
     }
-    const sign = foreignSigns.find((each) => rest.startsWith(each.sign) && !rest.startsWith(`${each.sign}=`));
+    const sign = foreignSigns.find((each) => rest.startsWith(each.sign));
     if (!sign) return false;
     this.at += sign.sign.length;
     if (sign.means === "") {

@@ -171,7 +171,7 @@ export function conditional(
     { expression: whenTrue, value: yes },
     { expression: whenFalse, value: no },
   ];
-  const type = alike(branches, expression, "chooses between", context);
+  const type = alike(branches, expression, "chooses", context);
   if (!type || !test) return null;
   return numberValue(
     {

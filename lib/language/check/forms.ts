@@ -88,7 +88,7 @@ function variableType(
   context: Context,
 ): NumberType | null {
   if (form !== "fixed_point" && !bounds.map((bound) => isSingle(bound, context)).every(Boolean)) return null;
-  const common = alike(bounds, expression, "joins the bounds", context);
+  const common = alike(bounds, expression, "bounds", context);
   if (!common) return null;
   if (form === "series") {
     const wrong = bounds.find((bound) => !isDimensionless(bound.value.type.dimension));

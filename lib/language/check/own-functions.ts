@@ -37,7 +37,7 @@ export function ownCall(
   const key = `${read.name}(${known.map((operand) => `${typeKey(operand.value.type)} ${operand.value.law}`).join(";")})`;
   let checked = state.remembered.get(key);
   if (checked === undefined) {
-    checked = checkInstance(symbol, known, check, context);
+    checked = checkInstance(symbol, known, expression, check, context);
     state.remembered.set(key, checked);
   }
   if (!checked) return null;
@@ -64,10 +64,11 @@ function counted(count: number): string {
 function checkInstance(
   symbol: FunctionSymbol,
   operands: readonly Operand[],
+  call: CallExpression,
   check: Check,
   context: Context,
 ): CheckedFunction | null {
-  const { state } = context;
+  const { state, place } = context;
   const { read } = symbol;
   if (!read.expression) return null;
   const parameters: FunctionInstance["parameters"] = (read.parameters ?? []).map((parameter, i) => {
@@ -81,7 +82,7 @@ function checkInstance(
   ]);
   const inside: Context = {
     state,
-    place: state.working,
+    place: state.working.inCall(`the call ${place.quote(call.span)}`),
     before: symbol.statement,
     tolerant: false,
     named: new Set(),

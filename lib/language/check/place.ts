@@ -3,13 +3,20 @@ import type { Mend, Span } from "../types";
 
 /** One text of the definition: where its faults are told, and what a span of it says. */
 export class Place {
-  private readonly lines: readonly string[];
+  private constructor(
+    private readonly findings: Findings,
+    private readonly lines: readonly string[],
+    /** The call in which a function is being checked. */
+    private readonly call: string | null,
+  ) {}
 
-  constructor(
-    readonly findings: Findings,
-    source: string,
-  ) {
-    this.lines = source.split("\n");
+  static of(findings: Findings, source: string): Place {
+    return new Place(findings, source.split("\n"), null);
+  }
+
+  /** The same text, read for one call of a function: what depends on the arguments names the call. */
+  inCall(call: string): Place {
+    return new Place(this.findings, this.lines, call);
   }
 
   /** Source between two places, in one line, without comments between them. */
@@ -40,10 +47,33 @@ export class Place {
   }
 
   tell(finding: Omit<Finding, "mend"> & { readonly mend?: Mend | null | undefined }): void {
-    const { mend, ...rest } = finding;
-    this.findings.add({ ...rest, ...(mend && { mend }) });
+    const { mend, message, ...rest } = finding;
+    const called = this.call !== null && dependsOnArguments.has(finding.code);
+    this.findings.add({
+      ...rest,
+      message: called ? `${message.replace(/\.$/, "")} (in ${this.call}).` : message,
+      ...(mend && { mend }),
+    });
   }
 }
+
+/** Faults that a function has for some arguments and not for others. */
+const dependsOnArguments: ReadonlySet<string> = new Set([
+  "absolute-from-difference",
+  "absolute-product",
+  "absolute-sum",
+  "bare-number",
+  "bare-number-wanted",
+  "dimension-limit",
+  "exponent",
+  "length-mismatch",
+  "list-wanted",
+  "no-temperature",
+  "number-wanted",
+  "temperature-kinds",
+  "temperature-wanted",
+  "unit-mismatch",
+]);
 
 /** Quotes cannot hold a # of a comment: a text ends on its line. */
 function withoutComment(line: string): string {

@@ -43,7 +43,7 @@ class ProgramCheck {
     const symbols = new Symbols(source.inputs);
     this.state = {
       symbols,
-      working: new Place(this.findings, source.working),
+      working: Place.of(this.findings, source.working),
       instances: [],
       remembered: new Map(),
       used: new Set(),
@@ -169,7 +169,7 @@ class ProgramCheck {
     const findings = this.findings.at(source.path);
     const expression = readExpression(source.text, findings);
     if (!expression) return;
-    const place = new Place(findings, source.text);
+    const place = Place.of(findings, source.text);
     const context = this.context(place, source.role === "limit" ? Infinity : -1, true);
     this.within(place, null, () => {
       const value = asCondition(check(expression, context), expression, context);

@@ -1,10 +1,10 @@
-import { isDimensionless, isTemperature, sameDimension } from "@/lib/units";
+import { isDimensionless, isTemperature, sameDimension, siUnitSymbol } from "@/lib/units";
 import type { Expression, ListLength, NumberType } from "../types";
 import type { Context } from "./context";
 import { replace } from "./place";
 import { isAbsolute, isDifference, isFinished, sameReading } from "./reading";
 import { sameLength, withLength, type NumberValue, type Value } from "./value";
-import { describe, describeDimension, describeLength } from "./words";
+import { describe, describeLength, quantityOf } from "./words";
 
 /** A value with the expression it came from. */
 export interface Operand {
@@ -97,7 +97,12 @@ export function commonLength(
         "length-mismatch",
         `${context.place.quote(whole.span)} joins lists of different length: ` +
           `${describeLength(length)}, and ${describeLength(own)}.`,
-        { hint: "Shorten one with `drop_first` or `drop_last`, or lengthen one with `prepend` or `append`." },
+        {
+          hint:
+            length.table === own.table
+              ? "Shorten one with `drop_first` or `drop_last`, or lengthen one with `prepend` or `append`."
+              : "Only lists of the same table can be joined row by row.",
+        },
       );
       return undefined;
     }
@@ -108,12 +113,12 @@ export function commonLength(
 
 /**
  * Common type of values of which one is taken (branches, `min`, list elements): equal dimension and reading, which the
- * result keeps. Null after an error. `verb` fits into "`…` compares temperature (K) with length (m)".
+ * result keeps. Null after an error.
  */
 export function alike(
   operands: readonly Operand[],
   whole: Expression,
-  verb: string,
+  verb: Verb,
   context: Context,
 ): NumberType | null {
   const { place } = context;
@@ -146,7 +151,7 @@ export function alike(
       return place.fault(
         whole.span,
         "temperature-kinds",
-        `${place.quote(whole.span)} ${verb} ${describe(type)} ${joiner(verb)} ${describe(other)}.`,
+        `${place.quote(whole.span)} ${together(verb, describe(type), describe(other))}.`,
         unread
           ? castHint(unread, context)
           : {
@@ -179,46 +184,61 @@ export function dimensionsDiffer(
   left: Operand,
   right: Operand,
   whole: Expression,
-  verb: string,
+  verb: Verb,
   context: Context,
 ): null {
   const { place } = context;
   const bare = [left, right].find((operand) => isDimensionless(operand.value.type.dimension));
-  const other = bare === left ? right : left;
-  if (bare) {
-    const text = place.text(bare.expression.span);
-    const literal = bare.expression.node === "number";
+  if (!bare)
     return place.fault(
-      bare.expression.span,
-      "bare-number",
-      `${place.quote(whole.span)} ${verb} the bare number ${place.quote(bare.expression.span)} ${joiner(verb)} ` +
-        `${elementOf(other)}.`,
-      {
-        hint: literal
-          ? `Write it with its unit: "${text} ${unitHint(other)}".`
-          : 'Give it a unit, or make the other a bare number with `number_in(x, "unit")`.',
-      },
+      whole.span,
+      "unit-mismatch",
+      `${place.quote(whole.span)} ${together(verb, elementOf(left), elementOf(right))}.`,
+      { hint: "Both must have the same dimension. Look for a factor that is missing." },
     );
-  }
+  const named = `the bare number ${place.quote(bare.expression.span)}`;
+  const text = `"${place.text(bare.expression.span)} ${likelyUnit(bare === left ? right : left, verb)}"`;
+  const literal = bare.expression.node === "number";
   return place.fault(
-    whole.span,
-    "unit-mismatch",
-    `${place.quote(whole.span)} ${verb} ${elementOf(left)} ${joiner(verb)} ${elementOf(right)}.`,
-    { hint: "Both must have the same dimension. Look for a factor that is missing." },
+    bare.expression.span,
+    "bare-number",
+    `${place.quote(whole.span)} ` +
+      `${bare === left ? together(verb, named, elementOf(right)) : together(verb, elementOf(left), named)}.`,
+    {
+      hint: literal
+        ? `Write it with its unit, such as ${text}.`
+        : 'Give it a unit, or make the other a bare number with `number_in(x, "unit")`.',
+      mend: literal ? replace(bare.expression.span, text) : null,
+    },
   );
+}
+
+/** What joins two values, in the words of the sentence that refuses them. */
+export type Verb = "adds" | "subtracts" | "compares" | "averages" | "joins" | "chooses" | "bounds";
+
+function together(verb: Verb, left: string, right: string): string {
+  switch (verb) {
+    case "subtracts":
+      return `subtracts ${right} from ${left}`;
+    case "compares":
+      return `compares ${left} with ${right}`;
+    case "chooses":
+      return `chooses between ${left} and ${right}`;
+    case "bounds":
+      return `has bounds of two kinds, ${left} and ${right}`;
+    default:
+      return `${verb} ${left} and ${right}`;
+  }
 }
 
 function elementOf(operand: Operand): string {
   return describe(withLength(operand.value.type, null));
 }
 
-function joiner(verb: string): string {
-  return verb === "subtracts" ? "and" : verb === "compares" ? "with" : "and";
-}
-
-function unitHint(operand: Operand): string {
-  const { dimension } = operand.value.type;
-  if (isTemperature(dimension)) return isAbsolute(operand.value.type) ? "°C" : "ΔK";
-  const unit = /\(([^()]*(?:\([^()]*\)[^()]*)*)\)$/.exec(describeDimension(dimension))?.[1];
-  return unit ?? describeDimension(dimension).replace("a quantity in ", "");
+/** Unit that was probably meant: the one that the catalogue prefers; in a sum with a temperature a difference. */
+function likelyUnit(operand: Operand, verb: Verb): string {
+  const { type } = operand.value;
+  if (isTemperature(type.dimension))
+    return isAbsolute(type) && verb !== "adds" && verb !== "subtracts" ? "°C" : "ΔK";
+  return quantityOf(type)?.unit ?? siUnitSymbol(type.dimension);
 }
