@@ -378,6 +378,7 @@ export type TableInput = z.infer<typeof TableInput>;
 export type Column = z.infer<typeof Column>;
 export type Result = z.infer<typeof Result>;
 export type Limit = z.infer<typeof Limit>;
+export type Requirement = z.infer<typeof Requirement>;
 export type Figure = z.infer<typeof Figure>;
 export type WorkedCase = z.infer<typeof WorkedCase>;
 export type CaseBasis = (typeof caseBases)[number];

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import type { FaultOfRow } from "@/lib/core/problem";
 
 /**
  * What a run is asked and what it answers, in the form of the REST contract. The same shapes serve the form, the API,
@@ -15,6 +16,8 @@ export const GivenQuantity = z.strictObject({
   halfWidth: Finite.nonnegative().optional(),
   distribution: z.enum(["normal", "uniform", "triangular"]).optional(),
   degreesOfFreedom: Finite.positive().optional(),
+  /** Of a constant property in place of a material: the mean temperature it was stated at. */
+  at: z.strictObject({ value: Finite, unit: z.string().max(64) }).optional(),
 });
 
 export const GivenCell = z.union([Finite, z.string().max(200), GivenQuantity, z.null()]);
@@ -60,7 +63,7 @@ export const UsedQuantity = z.object({
   si: Finite,
 });
 export const UsedMaterial = z.object({ material: z.string(), revision: z.number().int() });
-export const UsedConstant = z.object({ constant: UsedQuantity });
+export const UsedConstant = z.object({ constant: UsedQuantity, at: UsedQuantity.optional() });
 export const UsedCell = z.union([
   UsedQuantity,
   UsedMaterial,
@@ -124,8 +127,24 @@ export const TemplateEvaluation = z.object({
   ...Evaluation.shape,
 });
 
+/** One row of an evaluation of many: results as bare numbers in the units stated once for all rows. */
+export type RowOutcome =
+  | {
+      status: Status;
+      results: Record<string, number | number[]>;
+      cautions?: Caution[];
+    }
+  | { problem: FaultOfRow };
+
+export interface RowsOutcome {
+  /** Unit of each result. */
+  units: Record<string, { unit: string; ucum: string | null }>;
+  rows: RowOutcome[];
+}
+
 export type GivenInputs = z.infer<typeof GivenInputs>;
 export type GivenValue = z.infer<typeof GivenValue>;
+export type GivenCell = z.infer<typeof GivenCell>;
 export type GivenQuantity = z.infer<typeof GivenQuantity>;
 export type RunRequest = z.infer<typeof RunRequest>;
 export type RowsRequest = z.infer<typeof RowsRequest>;
@@ -134,6 +153,10 @@ export type TemplateEvaluation = z.infer<typeof TemplateEvaluation>;
 export type UsedValue = z.infer<typeof UsedValue>;
 export type UsedCell = z.infer<typeof UsedCell>;
 export type ResultValue = z.infer<typeof ResultValue>;
+export type UsedQuantity = z.infer<typeof UsedQuantity>;
+export type Caution = z.infer<typeof Caution>;
+export type Notice = z.infer<typeof Notice>;
+export type Step = z.infer<typeof Step>;
 export type LimitVerdict = z.infer<typeof LimitVerdict>;
 export type Status = z.infer<typeof Status>;
 export type Origin = z.infer<typeof Origin>;
