@@ -1,4 +1,4 @@
-/** Signs that look the same to an engineer and not to a computer, one character for one. */
+/** Signs that look the same to an engineer and not to a computer. */
 const alike: ReadonlyMap<string, string> = new Map([
   ["\u03bc", "µ"], // Greek small mu
   ["\u2126", "Ω"], // ohm sign
@@ -10,6 +10,7 @@ const alike: ReadonlyMap<string, string> = new Map([
   ["\u03f5", "ε"],
   ["\u2103", "°C"],
   ["\u2109", "°F"],
+  ["₂", "2"], // inH₂O
 ]);
 
 /** The word in the catalogue's own characters. */

@@ -19,6 +19,8 @@ export const zero: Rational = rational(0);
 export const one: Rational = rational(1);
 
 export function addRational(a: Rational, b: Rational): Rational {
+  if (a.n === 0) return b;
+  if (b.n === 0) return a;
   return a.d === b.d ? rational(a.n + b.n, a.d) : rational(a.n * b.d + b.n * a.d, a.d * b.d);
 }
 
@@ -27,6 +29,7 @@ export function negateRational(a: Rational): Rational {
 }
 
 export function multiplyRational(a: Rational, b: Rational): Rational {
+  if (a.n === 0 || b.n === 0) return zero;
   return rational(a.n * b.n, a.d * b.d);
 }
 

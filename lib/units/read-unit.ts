@@ -73,9 +73,9 @@ function readTyped(text: string): Assembled {
 }
 
 function strictTerm(factor: Factor): Term {
-  if (factor.kind === "ten") return { ...factor, entry: tenEntry };
-  const entry = lookup(factor.word);
-  if (entry) return { ...factor, entry };
+  const { exponent, start, end } = factor;
+  const entry = factor.kind === "ten" ? tenEntry : lookup(factor.word);
+  if (entry) return { entry, exponent, start, end };
   const explanation = explain(factor.word);
   if (explanation) throw unreadable(factor, explanation.message, explanation.suggestions, true);
   const nearest = nearestUnits(factor.word);

@@ -14,9 +14,9 @@ export interface Token {
 }
 
 const blank = /[\s\u200b\u2060\u2062]+/y;
-const letters = /[\p{L}°º˚℃℉Δ∆%‰_'"′″€$£]+/uy;
+const letters = /[\p{L}°º˚℃℉℧Δ∆%‰_'"′″€$£]+/uy;
 /** Words with digits or UCUM brackets inside them: `inH2O`, `m[Hg]`. */
-const longWord = /[\p{L}°%_[][\p{L}\p{Nd}°%_'[\]]*/uy;
+const longWord = /[\p{L}°℧%_[][\p{L}℧\p{Nd}₀-₉°%_'[\]]*/uy;
 const number = /\d+(?:\.\d+)?(?:[eE][+\-−]?\d+)?/y;
 const superscripts = /[⁺⁻]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+/y;
 const superscriptDigits = "⁰¹²³⁴⁵⁶⁷⁸⁹";

@@ -4,7 +4,6 @@ import { NIST, SI } from "./sources";
 
 const current = "electric current";
 
-// prettier-ignore
 export const electricalUnits: readonly UnitRow[] = [
   ...unitRows({ [current]: 1 }, [
     // symbol signs      names             definition   prefixes                    UCUM   source

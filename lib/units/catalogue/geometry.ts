@@ -6,7 +6,6 @@ const inchPrefixes: readonly PrefixSymbol[] = ["µ"];
 const litrePrefixes: readonly PrefixSymbol[] = ["M", "k", "h", "d", "c", "m", "µ", "n"];
 const US_GALLON = "gal, qt, pt, fl_oz are the US liquid ones; the imperial ones are gal_uk, qt_uk, pt_uk, fl_oz_uk.";
 
-// prettier-ignore
 const length = unitRows({ length: 1 }, [
   // symbol     signs             names                       definition         prefixes      UCUM        source
   ["m",        "",               "metre meter",              "1",               metric,       "m",        SI],
@@ -22,7 +21,6 @@ const length = unitRows({ length: 1 }, [
   ["au",       "",               "",                         "149597870700",    none,         null,       IAU],
 ]);
 
-// prettier-ignore
 const area = unitRows({ length: 2 }, [
   ["ha",       "",               "hectare",                  "10000",           none,         "har",      SI],
   ["are",      "",               "",                         "100",             none,         "ar",       NIST],
@@ -35,7 +33,6 @@ const area = unitRows({ length: 2 }, [
   ["b",        "",               "barn",                     "1e-28",           none,         "b",        NIST],
 ]);
 
-// prettier-ignore
 const volume = unitRows({ length: 3 }, [
   ["L",        "l ℓ",            "litre liter",              "0.001",           litrePrefixes, "L",       SI, { codes: ["l"] }],
   ["cc",       "ccm",            "",                         "1e-6",            none,         null,       COMMON],
@@ -53,7 +50,6 @@ const volume = unitRows({ length: 3 }, [
   ["bbl",      "",               "barrel",                   "0.158987294928",  none,         "[bbl_us]", NIST, { notice: "bbl is the oil barrel of 42 US gallons." }],
 ]);
 
-// prettier-ignore
 const time = unitRows({ time: 1 }, [
   ["s",        "sec",            "second",                   "1",    ["M", "k", ...downward], "s",        SI],
   ["min",      "",               "minute",                   "60",              none,         "min",      SI],
@@ -63,13 +59,11 @@ const time = unitRows({ time: 1 }, [
   ["a",        "yr",             "year",                     "31557600",        none,         "a",        ISO, { codes: ["a_j"], notice: "a is a year of 365.25 d." }],
 ]);
 
-// prettier-ignore
 const frequency = unitRows({ time: -1 }, [
   ["Hz",       "",               "hertz",                    "1",    [...kiloMega, "G", "T", "m"], "Hz",  SI],
   ["rpm",      "RPM",            "",                         "1/60",            none,         null,       COMMON, { notice: "rpm is a frequency, 1/min; an angular velocity is written rad/s." }],
 ]);
 
-// prettier-ignore
 const velocity = unitRows({ length: 1, time: -1 }, [
   ["mph",      "MPH",            "",                         "0.44704",         none,         null,       YARD],
   ["kph",      "kmh",            "",                         "1/3.6",           none,         null,       COMMON],
@@ -78,13 +72,11 @@ const velocity = unitRows({ length: 1, time: -1 }, [
   ["kn",       "",               "knot",                     "1852/3600",       none,         "[kn_i]",   SI],
 ]);
 
-// prettier-ignore
 const acceleration = unitRows({ length: 1, time: -2 }, [
   ["g_n",      "",               "",                         "9.80665",         none,         "[g]",      SI],
   ["Gal",      "",               "",                         "0.01",         ["m", "µ"],      "Gal",      NIST],
 ]);
 
-// prettier-ignore
 const flow = unitRows({ length: 3, time: -1 }, [
   ["cfm",      "CFM",            "",                         "0.028316846592/60", none,       null,       YARD],
   ["cfs",      "",               "",                         "0.028316846592",  none,         null,       YARD],

@@ -7,7 +7,6 @@ const CAL = "cal is the thermochemical calorie, 4.184 J; cal_IT is 4.1868 J.";
 const KCAL = "kcal is 4186.8 J (International Table), as in heat-transfer tables; kcal_th is 4184 J.";
 const BTU_IT = "1055.05585262";
 
-// prettier-ignore
 const energy = unitRows({ mass: 1, length: 2, time: -2 }, [
   // symbol  signs                      names              definition        prefixes   UCUM       source
   ["J",      "",                       "joule",           "1",              wide,      "J",       SI],
@@ -32,7 +31,6 @@ const energy = unitRows({ mass: 1, length: 2, time: -2 }, [
   ["Eh",     "",                       "hartree",         "4.3597447222060e-18", none, null,      CODATA],
 ]);
 
-// prettier-ignore
 const power = unitRows({ mass: 1, length: 2, time: -3 }, [
   ["W",      "",                       "watt",            "1",              metric,    "W",       SI],
   ["VA",     "",                       "",                "1",              ["k", "M", "G", "m"], "V.A", NIST],
@@ -46,17 +44,14 @@ const power = unitRows({ mass: 1, length: 2, time: -3 }, [
   ["ton_refrigeration", "TR tonref ton_ref", "",          `${BTU_IT}*12000/3600`, none, null,     NIST, { notice: "ton_refrigeration is 12 000 BTU/h, 3517 W." }],
 ]);
 
-// prettier-ignore
 const heatFlux = unitRows({ mass: 1, time: -3 }, [
   ["met",    "",                       "",                "58.2",           none,      null,      "ISO 7730:2005"],
 ]);
 
-// prettier-ignore
 const radiantExposure = unitRows({ mass: 1, time: -2 }, [
   ["langley", "Ly",                    "",                "41840",          none,      null,      NIST],
 ]);
 
-// prettier-ignore
 const insulance = unitRows({ temperature: 1, time: 3, mass: -1 }, [
   ["clo",    "",                       "",                "0.155",          none,      null,      "ISO 9920"],
   ["tog",    "",                       "",                "0.1",            none,      null,      "BS 4745"],

@@ -6,7 +6,6 @@ const gramPrefixes: readonly PrefixSymbol[] = ["T", "G", "M", "k", "d", "c", "m"
 const tonnePrefixes: readonly PrefixSymbol[] = ["k", "M", "G"];
 const GAUGE = "is above atmospheric pressure, taken as 101 325 Pa.";
 
-// prettier-ignore
 const mass = unitRows({ mass: 1 }, [
   // symbol      signs             names               definition         prefixes      UCUM         source
   ["g",         "",               "gram gramme",      "0.001",           gramPrefixes, "g",         SI],
@@ -23,18 +22,15 @@ const mass = unitRows({ mass: 1 }, [
   ["u",         "Da",             "dalton",           "1.66053906892e-27", none,       null,        CODATA],
 ]);
 
-// prettier-ignore
 const density = unitRows({ mass: 1, length: -3 }, [
   ["pcf",       "",               "",                 "0.45359237/0.028316846592", none, null,      COMMON],
 ]);
 
-// prettier-ignore
 const linearDensity = unitRows({ mass: 1, length: -1 }, [
   ["tex",       "",               "",                 "1e-6",            none,         "tex",       NIST],
   ["denier",    "",               "",                 "1e-3/9000",       none,         "[den]",     NIST],
 ]);
 
-// prettier-ignore
 const force = unitRows({ mass: 1, length: 1, time: -2 }, [
   ["N",         "",               "newton",           "1",               metric,       "N",         SI],
   ["dyn",       "",               "dyne",             "1e-5",            none,         "dyn",       NIST],
@@ -48,7 +44,6 @@ const force = unitRows({ mass: 1, length: 1, time: -2 }, [
   ["pdl",       "",               "poundal",          "0.45359237*0.3048",       none, null,        NIST],
 ]);
 
-// prettier-ignore
 const pressure = unitRows({ mass: 1, length: -1, time: -2 }, [
   ["Pa",        "",               "pascal",           "1",               metric,       "Pa",        SI],
   ["bar",       "bara",           "bar",              "100000",          ["k", "m", "µ"], "bar",    SI],
@@ -61,11 +56,11 @@ const pressure = unitRows({ mass: 1, length: -1, time: -2 }, [
   ["mmHg",      "",               "",                 "133.322387415",   none,         null,        NIST],
   ["cmHg",      "",               "",                 "1333.22387415",   none,         null,        NIST],
   ["inHg",      "",               "",                 "3386.388640341",  none,         null,        NIST],
-  ["mmH2O",     "mmWC mmWG mmH₂O", "",                "9.80665",         none,         "mm[H2O]",   NIST],
-  ["cmH2O",     "cmWC cmH₂O",     "",                 "98.0665",         none,         "cm[H2O]",   NIST],
-  ["mH2O",      "mWC mWS mH₂O",   "",                 "9806.65",         none,         "m[H2O]",    NIST],
-  ["inH2O",     "inWC inWG inH₂O iwg", "",            "249.08891",       none,         "[in_i'H2O]", NIST],
-  ["ftH2O",     "ftWC ftH₂O",     "",                 "2989.06692",      none,         null,        NIST],
+  ["mmH2O",     "mmWC mmWG", "",                "9.80665",         none,         "mm[H2O]",   NIST],
+  ["cmH2O",     "cmWC",     "",                 "98.0665",         none,         "cm[H2O]",   NIST],
+  ["mH2O",      "mWC mWS",   "",                 "9806.65",         none,         "m[H2O]",    NIST],
+  ["inH2O",     "inWC inWG iwg", "",            "249.08891",       none,         "[in_i'H2O]", NIST],
+  ["ftH2O",     "ftWC",     "",                 "2989.06692",      none,         null,        NIST],
   ["barye",     "",               "",                 "0.1",             none,         null,        NIST],
   ["barg",      "barG bar(g)",    "",                 "100000", none, null, COMMON, { shift: 1.01325, alone: true, notice: `barg ${GAUGE}` }],
   ["mbarg",     "mbar(g)",        "",                 "100",    none, null, COMMON, { shift: 1013.25, alone: true, notice: `mbarg ${GAUGE}` }],
@@ -75,29 +70,24 @@ const pressure = unitRows({ mass: 1, length: -1, time: -2 }, [
   ["psig",      "psiG psi(g)",    "",                 "0.45359237*9.80665/0.00064516", none, null, COMMON, { shift: 101325 / 6894.757293168361, alone: true, notice: `psig ${GAUGE}` }],
 ]);
 
-// prettier-ignore
 const dynamicViscosity = unitRows({ mass: 1, length: -1, time: -1 }, [
   ["P",         "",               "poise",            "0.1",             ["d", "c", "m", "µ"], "P",   NIST],
   ["reyn",      "",               "",                 "0.45359237*9.80665/0.00064516", ["µ"], null,   NIST],
 ]);
 
-// prettier-ignore
 const kinematicViscosity = unitRows({ length: 2, time: -1 }, [
   ["St",        "",               "stokes",           "0.0001",          ["c", "m"],   "St",        NIST],
 ]);
 
-// prettier-ignore
 const amount = unitRows({ "amount of substance": 1 }, [
   ["mol",       "",               "mole",             "1",  ["k", "M", "m", "µ", "n", "p"], "mol",  SI],
   ["lbmol",     "lb_mol",         "",                 "453.59237",       none,         null,        NIST],
 ]);
 
-// prettier-ignore
 const catalysis = unitRows({ "amount of substance": 1, time: -1 }, [
   ["kat",       "",               "katal",            "1",     ["m", "µ", "n", "p"],   "kat",       SI],
 ]);
 
-// prettier-ignore
 const permeance = unitRows({ time: 1, length: -1 }, [
   ["perm", "perm_us", "", "0.00006479891/3600/0.09290304/3386.388640341", none, null, NIST, { notice: "perm is the US one, gr/(h·ft²·inHg) with mercury at 0 °C." }],
 ]);

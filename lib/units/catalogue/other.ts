@@ -2,7 +2,6 @@ import { kiloMega, micro, none } from "./prefixes";
 import { unitRows, type UnitRow } from "./row";
 import { COMMON, ISO, NIST, SI } from "./sources";
 
-// prettier-ignore
 const fractions = unitRows({}, [
   // symbol   signs            names             definition       prefixes  UCUM      source
   ["%",      "pct",           "percent",        "0.01",          none,     "%",      ISO],
@@ -19,31 +18,26 @@ const fractions = unitRows({}, [
   ["rev",    "turn",          "revolution",     "2*pi",          none,     "circ",   COMMON, { notice: "rev is an angle of 2π; a frequency in turns is written 1/min or rpm." }],
 ]);
 
-// prettier-ignore
 const luminous = unitRows({ "luminous intensity": 1 }, [
   ["cd",     "",              "candela",        "1",             ["k", "m"], "cd",   SI],
   ["lm",     "",              "lumen",          "1",             ["k", "m"], "lm",   SI],
 ]);
 
-// prettier-ignore
 const illuminance = unitRows({ "luminous intensity": 1, length: -2 }, [
   ["lx",     "",              "lux",            "1",             ["k", "m"], "lx",   SI],
   ["fc",     "",              "footcandle",     "1/0.09290304",  none,     null,     NIST],
 ]);
 
-// prettier-ignore
 const activity = unitRows({ time: -1 }, [
   ["Bq",     "",              "becquerel",      "1",             [...kiloMega, "G", "T"], "Bq", SI],
   ["Ci",     "",              "curie",          "3.7e10",        ["k", "m", "µ"], "Ci", NIST],
 ]);
 
-// prettier-ignore
 const dose = unitRows({ length: 2, time: -2 }, [
   ["Gy",     "",              "gray",           "1",             ["k", "m", "µ"], "Gy", SI],
   ["Sv",     "",              "sievert",        "1",             ["m", "µ"], "Sv",   SI],
 ]);
 
-// prettier-ignore
 const money = unitRows({ money: 1 }, [
   ["EUR",    "€",             "euro",           "1",             kiloMega, null,     "ISO 4217"],
 ]);

@@ -11,7 +11,6 @@ export type QuantityRow = readonly [
   kind?: ScaleKind,
 ];
 
-// prettier-ignore
 export const quantityRows: readonly QuantityRow[] = [
   // ── temperature
   ["temperature",                     "°C K °F °R",                                          [0, 3000],      "absolute"],

@@ -3,7 +3,6 @@ import { unitRows, type UnitRow } from "./row";
 import { NIST, SI } from "./sources";
 
 /** Zeros are in the unit itself: 0 °C is −(−273.15) steps above 0 K, 0 °F is 459.67 steps. */
-// prettier-ignore
 export const temperatureUnits: readonly UnitRow[] = unitRows({ temperature: 1 }, [
   // symbol  signs                        names                    definition  prefixes  UCUM      source
   ["K",   "°K degK deg_K",               "kelvin",                "1",       downward, "K",      SI],

@@ -4,7 +4,6 @@ import { unitRows, type UnitRow } from "./row";
 const UCUM = "UCUM 2.2";
 
 /** Units that only UCUM names, or that it sizes differently from the trade. The code is the symbol. */
-// prettier-ignore
 export const ucumOnlyUnits: readonly UnitRow[] = [
   ...unitRows({ mass: 1, length: 2, time: -2 }, [
     // symbol      signs names definition          prefixes    UCUM         source
