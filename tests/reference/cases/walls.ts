@@ -1,0 +1,371 @@
+import { readFileSync } from "node:fs";
+import { fileURLToPath } from "node:url";
+import { input, inputs, type CaseRuns } from "../reference-case";
+import { given, ownWorking, refuses, run, stated } from "../shelf";
+
+interface AirLayers {
+  readonly "air-layers": {
+    readonly values: Readonly<Record<"t_mm" | "up" | "horizontal" | "down", number[]>>;
+  };
+}
+const tables = JSON.parse(
+  readFileSync(fileURLToPath(new URL("../data/tables.json", import.meta.url)), "utf8"),
+) as AirLayers;
+
+/** Resistance of an unventilated air layer, read with the language's own interpolation. */
+function airLayer(direction: "up" | "horizontal" | "down", thickness: number): number {
+  const { t_mm, [direction]: resistance } = tables["air-layers"].values;
+  return ownWorking(`R = interpolate("${thickness} mm", air.t, air.R)`, {
+    symbol: "air",
+    columns: { t: ["mm", t_mm], R: ["m²·K/W", resistance] },
+  }).number("R");
+}
+
+const layer = (t: number, k: number) => ({ t: given(t, "m"), k: given(k, "W/(m·K)") });
+const insulance = (value: number) => given(value, "m²·K/W");
+
+function generatingWall(g: number, L: number, k: number, h: number, T_inf: number) {
+  return run("generating-wall", {
+    g,
+    L: given(L, "m"),
+    k,
+    h,
+    T_inf: given(T_inf, "K"),
+  });
+}
+
+export const wallRuns: CaseRuns = {
+  "PW-01": {
+    through: "plane-wall",
+    answers: (c) => {
+      const wall = run("plane-wall", {
+        A: input(c, "A"),
+        t: given(input(c, "L"), "m"),
+        k: input(c, "k"),
+        T_hot: given(input(c, "T1"), "K"),
+        T_cold: given(input(c, "T2"), "K"),
+      });
+      return { q_flux: wall.number("q"), q: wall.number("Q") };
+    },
+  },
+  "PW-02": {
+    through: "plane-wall",
+    answers: (c) => {
+      const wall = run("plane-wall", {
+        A: input(c, "H") * input(c, "W"),
+        t: given(input(c, "L"), "m"),
+        k: input(c, "k"),
+        T_hot: given(input(c, "T1"), "K"),
+        T_cold: given(input(c, "T2"), "K"),
+      });
+      return { q: wall.number("Q") };
+    },
+  },
+  "PW-03": {
+    through: "composite-wall",
+    answers: (c) => {
+      const wall = run("composite-wall", {
+        A: input(c, "A"),
+        T_i: given(input(c, "T_i"), "K"),
+        T_e: given(input(c, "T_o"), "K"),
+        R_si: insulance(1 / input(c, "h_i")),
+        R_se: insulance(1 / input(c, "h_o")),
+        layers: [layer(input(c, "L"), input(c, "k"))],
+      });
+      return { q: wall.number("Q"), T_s_in: wall.list("T_face")[0] ?? NaN };
+    },
+  },
+  "PW-04": {
+    through: "composite-wall",
+    answers: (c) => {
+      const glass = layer(input(c, "L_glass"), input(c, "k_glass"));
+      const wall = run("composite-wall", {
+        A: input(c, "A"),
+        T_i: given(input(c, "T_i"), "K"),
+        T_e: given(input(c, "T_o"), "K"),
+        R_si: insulance(1 / input(c, "h_i")),
+        R_se: insulance(1 / input(c, "h_o")),
+        layers: [glass, layer(input(c, "L_gap"), input(c, "k_gap")), glass],
+      });
+      return { q: wall.number("Q"), T_s_in: wall.list("T_face")[0] ?? NaN };
+    },
+  },
+  "PW-05": {
+    through: "stud-wall",
+    answers: (c) => {
+      const joints = input(c, "n_joint") * input(c, "joint_height") * input(c, "depth");
+      const module = input(c, "module");
+      const row = (t: number, k: number, frame = k) => ({ t: given(t, "m"), k_field: k, k_frame: frame });
+      const plaster = row(input(c, "plaster_L"), input(c, "plaster_k"));
+      const wall = run("stud-wall", {
+        R_si: 1 / input(c, "h_i"),
+        R_se: 1 / input(c, "h_o"),
+        f: joints / module,
+        layers: [
+          row(input(c, "foam_L"), input(c, "foam_k")),
+          plaster,
+          row(input(c, "core_L"), input(c, "brick_k"), input(c, "joint_k")),
+          plaster,
+        ],
+      });
+      const R_total = wall.number("R_lower") / module;
+      return { R_total, q_module: (input(c, "T_i") - input(c, "T_o")) / R_total };
+    },
+  },
+  "PW-06": {
+    through: "composite-wall, text",
+    answers: () => {
+      const [up, horizontal, down, outside] = stated(
+        "composite-wall",
+        /inside ([\d.]+) upwards, ([\d.]+) horizontal, ([\d.]+) downwards; outside ([\d.]+) m²/,
+      );
+      return {
+        Rsi_up: up ?? NaN,
+        Rsi_horizontal: horizontal ?? NaN,
+        Rsi_down: down ?? NaN,
+        Rse: outside ?? NaN,
+      };
+    },
+  },
+  "PW-07": {
+    through: "own working",
+    answers: () => ({
+      R_horizontal_25: airLayer("horizontal", 25),
+      R_horizontal_300: airLayer("horizontal", 300),
+      R_up_25: airLayer("up", 25),
+      R_up_300: airLayer("up", 300),
+      R_down_25: airLayer("down", 25),
+      R_down_50: airLayer("down", 50),
+      R_down_100: airLayer("down", 100),
+      R_down_300: airLayer("down", 300),
+      R_any_5: airLayer("horizontal", 5),
+      R_any_7: airLayer("up", 7),
+      R_any_10: airLayer("down", 10),
+      R_horizontal_20: airLayer("horizontal", 20),
+    }),
+  },
+  "PW-08": {
+    through: "composite-wall",
+    answers: (c) => {
+      const k = inputs(c, "k");
+      const solid = inputs(c, "L").map((t, i) => layer(t, k[i] ?? NaN));
+      const wall = run("composite-wall", {
+        R_si: input(c, "Rsi"),
+        R_se: input(c, "Rse"),
+        layers: [...solid, layer(0.05, 0.05 / input(c, "R_air"))],
+      });
+      const U = wall.number("U");
+      return { R_tot: wall.number("R_T"), U, U_2dp: Math.round(U * 100) / 100 };
+    },
+  },
+  "PW-10": {
+    through: "own working",
+    answers: (c) => ({
+      U: ownWorking(`
+R_0 = "${input(c, "R0")} m²·K/W"
+R_1 = "${input(c, "d1")} m"/"${input(c, "k1")} W/(m·K)"
+U = integral(x, 0, 1, 1/(R_0 + x*R_1))   # area mean of the transmittance of a wedge`).number("U"),
+    }),
+  },
+  "PW-13": {
+    through: "own working",
+    answers: (c) => ({
+      dU_f: ownWorking(`
+R_1 = "${input(c, "R1")} m²·K/W"
+R_tot = "${input(c, "R_tot")} m²·K/W"
+dU_f = ${input(c, "alpha")}*"${input(c, "k_f")} W/(m·K)"*"${input(c, "n_f")} 1/m²"*"${input(c, "A_f")} m²"/"${input(c, "d0")} m"*(R_1/R_tot)^2`).number(
+        "dU_f",
+      ),
+    }),
+  },
+  "PW-14": {
+    through: "own working",
+    answers: (c) => {
+      const level = (dU: number) =>
+        ownWorking(
+          `dU = "${dU} W/(m²·K)"*("${input(c, "R1")} m²·K/W"/"${input(c, "R_tot")} m²·K/W")^2`,
+        ).number("dU");
+      return { dU_level0: level(0), dU_level1: level(0.01), dU_level2: level(0.04) };
+    },
+  },
+  "PW-17": {
+    through: "plane-wall",
+    answers: (c) => {
+      const flux = (part: string) =>
+        run("plane-wall", {
+          t: given(input(c, `L_${part}`), "m"),
+          k: input(c, `k_${part}`),
+          T_hot: given(300 + input(c, `dT_${part}`), "K"),
+          T_cold: given(300, "K"),
+        }).number("q");
+      return { q_film: flux("film"), q_soil: flux("soil") };
+    },
+  },
+  "PW-18": {
+    through: "composite-wall",
+    answers: (c) => {
+      const [Rsi = NaN, plaster = NaN, insulation = NaN, render = NaN, Rse = NaN] = inputs(c, "R");
+      const [Ti, Te] = [input(c, "T_i"), input(c, "T_e")];
+      const wall = run("composite-wall", {
+        T_i: given(Ti, "K"),
+        T_e: given(Te, "K"),
+        R_si: Rsi,
+        R_se: Rse,
+        layers: [plaster, insulation / 2, insulation / 2, render].map((R) => layer(0.02, 0.02 / R)),
+      });
+      const [T_si = NaN, , T_mid = NaN] = wall.list("T_face");
+      return { f_Rsi: (T_si - Te) / (Ti - Te), T_si, T_mid };
+    },
+  },
+  "KT-01": {
+    through: "linear-k-wall",
+    answers: (c) => {
+      const wall = run("linear-k-wall", {
+        A: input(c, "A"),
+        t: given(input(c, "L"), "m"),
+        k_ref: input(c, "k0"),
+        T_ref: given(0, "K"),
+        b: input(c, "b"),
+        T_hot: given(input(c, "T1"), "K"),
+        T_cold: given(input(c, "T2"), "K"),
+      });
+      return { k_mean: wall.number("k_mean"), q: wall.number("Q") };
+    },
+  },
+  "HG-01": {
+    through: "generating-wall",
+    answers: (c) => {
+      const cover = input(c, "L_B") / input(c, "k_B");
+      const h = input(c, "h");
+      const wall = generatingWall(
+        input(c, "q_dot"),
+        input(c, "L_A"),
+        input(c, "k_A"),
+        1 / (cover + 1 / h),
+        input(c, "T_inf"),
+      );
+      return {
+        T_0: wall.number("T_max"),
+        T_1: wall.number("T_s"),
+        T_2: input(c, "T_inf") + wall.number("q_s") / h,
+      };
+    },
+  },
+  "HG-02": {
+    through: "generating-cylinder",
+    answers: (c) => {
+      const q_dot = input(c, "Q") / (((Math.PI * input(c, "D") ** 2) / 4) * input(c, "L"));
+      const wire = run("generating-cylinder", {
+        D: given(input(c, "D"), "m"),
+        k: input(c, "k"),
+        g: q_dot,
+        h: 1e12,
+        T_inf: given(input(c, "T_s"), "K"),
+      });
+      return { q_dot, T_0: wall0(wire.number("q_l"), q_dot, input(c, "D"), wire.number("T_max")) };
+    },
+  },
+  "HG-03": {
+    through: "own working",
+    answers: (c) => {
+      const ball = ownWorking(`
+g = "${input(c, "q_dot")} W/m³"
+r = "${input(c, "r")} m"
+T_s = "${input(c, "T_inf")} K" + g*r/(3*"${input(c, "h")} W/(m²·K)")
+T_0 = T_s + g*r^2/(6*"${input(c, "k")} W/(m·K)")`);
+      return { T_s: ball.number("T_s"), T_0: ball.number("T_0") };
+    },
+  },
+  "HG-05": {
+    through: "own working",
+    answers: (c) => {
+      // radial Poisson equation with an insulated bore, integrated numerically in the language
+      const tube = ownWorking(`
+g = "${input(c, "q_dot")} W/m³"
+k = "${input(c, "k")} W/(m·K)"
+r_1 = "${input(c, "r1")} m"
+r_2 = "${input(c, "r2")} m"
+flux(r) = g*(r^2 - r_1^2)/(2*r)
+T_1 = "${input(c, "T2")} K" + integral(r, r_1, r_2, flux(r)/k)
+q_2 = flux(r_2)`);
+      return { T1: tube.number("T_1"), q2: tube.number("q_2") };
+    },
+  },
+  "HG-07": {
+    through: "own working",
+    answers: (c) => {
+      const wall = ownWorking(`
+g = "${input(c, "q_dot")} W/m³"
+L = "${input(c, "L")} m"
+k = "${input(c, "k")} W/(m·K)"
+T_left = "${input(c, "T_left")} K"
+T_right = "${input(c, "T_right")} K"
+T_mid = (T_left + T_right)/2 + g*L^2/(8*k)
+q = k*(T_left - T_right)/L`);
+      return { T_mid: wall.number("T_mid"), q: wall.number("q") };
+    },
+  },
+  "HG-08": {
+    through: "generating-cylinder",
+    answers: (c) => {
+      const r = input(c, "r");
+      const q_dot = (input(c, "I") ** 2 * input(c, "rho_e")) / (Math.PI * r ** 2) ** 2;
+      const wire = run("generating-cylinder", {
+        D: given(2 * r, "m"),
+        k: input(c, "k"),
+        g: q_dot,
+        h: input(c, "h"),
+        T_inf: given(input(c, "T_inf"), "K"),
+      });
+      // the small drop inside is read from a wire held cold, free of the rounding at 700 K
+      const cold = run("generating-cylinder", {
+        D: given(2 * r, "m"),
+        k: input(c, "k"),
+        g: q_dot,
+        h: 1e15,
+        T_inf: given(0, "K"),
+      });
+      return {
+        q_dot,
+        q_per_m: wire.number("q_l"),
+        T_s: wire.number("T_s"),
+        dT_centre: cold.number("T_max") - cold.number("T_s"),
+      };
+    },
+  },
+  "ED-01": {
+    through: "plane-wall",
+    answers: (c) => ({
+      rejected:
+        refuses(() => run("plane-wall", { k: input(c, "k"), t: given(input(c, "L"), "m") })) &&
+        refuses(() => run("plane-wall", { k: -1, t: given(input(c, "L"), "m") })),
+    }),
+  },
+  "ED-04": {
+    through: "plane-wall",
+    answers: () => ({
+      rejected:
+        refuses(() => run("plane-wall", { T_cold: given(-300, "°C") })) &&
+        refuses(() => run("plane-wall", { T_cold: given(-460, "°F") })) &&
+        !refuses(() => run("plane-wall", { T_cold: given(0, "K") })),
+    }),
+  },
+  "IS-04": {
+    through: "own working",
+    answers: (c) => {
+      const corner = ownWorking(`
+L_2D = "${input(c, "L2D")} W/(m·K)"
+U = "${input(c, "U")} W/(m²·K)"
+Psi_int = L_2D - U*"${input(c, "l_int")} m"
+Psi_ext = L_2D - U*"${input(c, "l_ext")} m"`);
+      return { Psi_int: corner.number("Psi_int"), Psi_ext: corner.number("Psi_ext") };
+    },
+  },
+};
+
+/** Axis temperature, after making sure that the heat of the wire is what was put in. */
+function wall0(q_l: number, q_dot: number, D: number, T_max: number): number {
+  const put = (q_dot * Math.PI * D ** 2) / 4;
+  if (Math.abs(q_l / put - 1) > 1e-9) throw new Error(`The wire gives off ${q_l} W/m instead of ${put} W/m.`);
+  return T_max;
+}
