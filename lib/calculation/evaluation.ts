@@ -53,6 +53,7 @@ export const RowsRequest = z.strictObject({
   common: GivenInputs.optional(),
   units: z.record(z.string().max(64), z.string().max(64)).optional(),
   allowExtrapolation: z.boolean().optional(),
+  defaults: z.enum(["allow", "refuse"]).optional(),
 });
 
 /** A number as used: as given, and in SI. */

@@ -30,7 +30,7 @@ export class RowsRun {
     this.inputs = new InputsReader(prepared, materials, {
       echo: false,
       allowExtrapolation: request.allowExtrapolation === true,
-      refuseDefaults: false,
+      refuseDefaults: request.defaults === "refuse",
     });
     const problems: FieldProblem[] = [];
     const asked = requestedUnits(prepared, request.units, problems, new Set());

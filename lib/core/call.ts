@@ -24,9 +24,16 @@ export async function withProblems<Result>(
       throw error;
     },
   );
-  // An input left out for its fault is missing to the run; that says nothing new.
-  const news = found.filter((problem) => !problems.some((known) => within(known.pointer, problem.pointer)));
-  throw CodedError.from([...problems, ...news]);
+  throw CodedError.from(mergeProblems(problems, found));
+}
+
+/** Both together, without what follows from the first: an input left out for its fault is missing to the run. */
+export function mergeProblems(
+  known: readonly FieldProblem[],
+  found: readonly FieldProblem[],
+): FieldProblem[] {
+  const news = found.filter((problem) => !known.some((other) => within(other.pointer, problem.pointer)));
+  return [...known, ...news];
 }
 
 /** Whether two pointers name the same place or one lies within the other. */

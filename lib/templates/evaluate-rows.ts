@@ -1,15 +1,16 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
-import type { GivenInputs, RowsRequest } from "@/lib/calculation/evaluation";
-import { materialsNeeded } from "@/lib/calculation/execute";
+import type { RowsRequest } from "@/lib/calculation/evaluation";
+import { materialsNeededForRows } from "@/lib/calculation/execute";
 import { engineVersion } from "@/lib/calculation/engine";
 import { compute } from "@/lib/compute/compute";
-import { plainCall, type Call } from "@/lib/core/call";
+import { mergeProblems, plainCall, type Call } from "@/lib/core/call";
 import { CodedError, type FieldProblem } from "@/lib/core/errors";
 import { materialSnapshots } from "@/lib/materials/snapshots";
 import { countUsage } from "@/lib/usage/count";
 import { definitionOf } from "./definition-cache";
 import { lifecycleOf, revisionToRun } from "./find-revision";
+import { defaultsOf, mustTypeProblems } from "./run-revision";
 import type { EvaluatedRows, RowAnswer } from "./schemas";
 
 /** Runs many rows of a template; a faulty row is answered in its place and spoils no other. */
@@ -27,11 +28,9 @@ export async function evaluateRows(
     ...(input.common === undefined ? {} : { common: input.common }),
     ...(input.units === undefined ? {} : { units: input.units }),
     ...(input.allowExtrapolation === undefined ? {} : { allowExtrapolation: input.allowExtrapolation }),
+    ...defaultsOf(actor, input),
   };
-  const names = new Set(
-    request.rows.flatMap((row: GivenInputs) => materialsNeeded(definition, { ...request.common, ...row })),
-  );
-  const materials = await materialSnapshots([...names]);
+  const materials = await materialSnapshots(materialsNeededForRows(definition, request));
   const ran = await compute.evaluateRows(revision.definitionHash, definition, request, materials);
   countUsage(actor, revision.slug, revision.number, request.rows.length);
   return {
@@ -41,7 +40,11 @@ export async function evaluateRows(
       definitionHash: revision.definitionHash,
       engine: engineVersion,
       units: ran.units,
-      rows: ran.rows.map((row: RowAnswer, index: number) => withShapeFaults(row, ofRows.get(index))),
+      rows: ran.rows.map((row, index) => {
+        const given = { ...input.common, ...input.rows[index] };
+        const untyped = actor.kind === "key" ? mustTypeProblems(definition, given, ["rows", index]) : [];
+        return withFaults(row, [...(ofRows.get(index) ?? []), ...untyped]);
+      }),
     },
     lifecycle: await lifecycleOf(revision),
   };
@@ -62,8 +65,9 @@ function sorted(problems: readonly FieldProblem[]): {
   return { ofRows, ofRequest };
 }
 
-function withShapeFaults(row: RowAnswer, faults: FieldProblem[] | undefined): RowAnswer {
-  if (faults === undefined) return row;
-  const error = CodedError.from(faults);
-  return { problem: { code: error.code, detail: error.message, errors: faults } };
+function withFaults(row: RowAnswer, faults: readonly FieldProblem[]): RowAnswer {
+  if (faults.length === 0) return row;
+  const found = "problem" in row ? (row.problem.errors ?? []) : [];
+  const error = CodedError.from(mergeProblems(faults, found));
+  return { problem: { code: error.code, detail: error.message, errors: error.problems } };
 }

@@ -56,22 +56,26 @@ export async function runRevision(
   return answer;
 }
 
-function mustBeTyped(symbol: string, label: string): FieldProblem {
+function mustBeTyped(symbol: string, label: string, place: readonly PropertyKey[]): FieldProblem {
   return {
-    pointer: pointerTo("inputs", symbol),
+    pointer: pointerTo(...place, symbol),
     code: "missing-input",
     message: `${label} (${symbol}) takes no default here. Type its value.`,
   };
 }
 
 /** Known before the run: inputs that always apply. The rest shows in what the run left to its default. */
-function mustTypeProblems(definition: Definition, inputs: GivenInputs): FieldProblem[] {
+export function mustTypeProblems(
+  definition: Definition,
+  inputs: GivenInputs,
+  place: readonly PropertyKey[] = ["inputs"],
+): FieldProblem[] {
   return definition.inputs.flatMap((input) =>
     input.kind !== "table" &&
     input.mustType === true &&
     input.appliesWhen === undefined &&
     (inputs[input.symbol] ?? null) === null
-      ? [mustBeTyped(input.symbol, input.label)]
+      ? [mustBeTyped(input.symbol, input.label, place)]
       : [],
   );
 }
@@ -79,7 +83,7 @@ function mustTypeProblems(definition: Definition, inputs: GivenInputs): FieldPro
 function refuseDefaulted(definition: Definition, defaulted: readonly string[]): void {
   const problems = definition.inputs.flatMap((input) =>
     input.kind !== "table" && input.mustType === true && defaulted.includes(input.symbol)
-      ? [mustBeTyped(input.symbol, input.label)]
+      ? [mustBeTyped(input.symbol, input.label, ["inputs"])]
       : [],
   );
   if (problems.length > 0) throw CodedError.from(problems);
@@ -88,13 +92,18 @@ function refuseDefaulted(definition: Definition, defaulted: readonly string[]): 
 /** The request as the engine takes it, with the key's policy where the request is silent. */
 export function requestOf(actor: Actor, input: RunRequest): RunRequest {
   const { inputs, units, allowExtrapolation, steps, accept } = input;
-  const defaults = input.defaults ?? (actor.kind === "key" ? actor.defaultsPolicy : undefined);
   return {
     ...(inputs === undefined ? {} : { inputs }),
     ...(units === undefined ? {} : { units }),
     ...(allowExtrapolation === undefined ? {} : { allowExtrapolation }),
     ...(steps === undefined ? {} : { steps }),
     ...(accept === undefined ? {} : { accept }),
-    ...(defaults === undefined ? {} : { defaults }),
+    ...defaultsOf(actor, input),
   };
+}
+
+/** What the request says of defaults, else the policy of the key. */
+export function defaultsOf(actor: Actor, input: Pick<RunRequest, "defaults">): Pick<RunRequest, "defaults"> {
+  const defaults = input.defaults ?? (actor.kind === "key" ? actor.defaultsPolicy : undefined);
+  return defaults === undefined ? {} : { defaults };
 }
