@@ -1,6 +1,6 @@
 import { prepareConnections } from "./db/client";
 import { appliedMigration, newestMigration } from "./db/migrate";
-import { isDemoDatabase, refuseExposedDemo } from "./lib/access/installation";
+import { boundHost, isDemoDatabase, refuseExposedDemo } from "./lib/access/installation";
 import { env } from "./lib/core/env";
 import { log } from "./lib/core/log";
 import { needsFirstPerson, setUpCode } from "./lib/people/set-up-first-person";
@@ -16,7 +16,10 @@ export async function start(): Promise<void> {
     if ((await appliedMigration()) !== newestMigration) {
       throw new Error("The database is not up to date with this build. `npm run up` brings it there.");
     }
-    refuseExposedDemo({ ...settings, HOST: boundHost(settings.HOST) }, { demo: await isDemoDatabase() });
+    refuseExposedDemo(
+      { ...settings, HOST: boundHost(process.argv, settings) },
+      { demo: await isDemoDatabase() },
+    );
     if (await needsFirstPerson()) {
       log.info("first-person-wanted", {
         message: `Open ${settings.PUBLIC_URL}/set-up, set-up code ${setUpCode()}`,
@@ -30,12 +33,6 @@ export async function start(): Promise<void> {
     process.stderr.write(`\n${error instanceof Error ? error.message : String(error)}\n`);
     process.exit(1);
   }
-}
-
-/** The address that was given on the command line is the one that is bound, whatever HOST says. */
-function boundHost(host: string): string {
-  const at = process.argv.findIndex((word) => word === "--hostname" || word === "-H");
-  return (at >= 0 ? process.argv[at + 1] : undefined) ?? host;
 }
 
 async function lastFlush(): Promise<void> {

@@ -27,3 +27,19 @@ export function refuseExposedDemo(
       "Serve it on 127.0.0.1, begin with SEED=starter and a new DATABASE_URL, or set ALLOW_DEMO=1 if that is meant.",
   );
 }
+
+/**
+ * The address that the server really binds: the one of its command line, whatever HOST says. Without one `next start`
+ * binds every address; the development server hands its command line to a child that does not see it.
+ */
+export function boundHost(
+  commandLine: readonly string[],
+  settingsOfProcess: { HOST: string; NODE_ENV: string },
+): string {
+  for (const [at, word] of commandLine.entries()) {
+    if (word === "--hostname" || word === "-H") return commandLine[at + 1] ?? "::";
+    const joined = /^--hostname=(.*)$/.exec(word)?.[1];
+    if (joined !== undefined) return joined;
+  }
+  return settingsOfProcess.NODE_ENV === "production" ? "::" : settingsOfProcess.HOST;
+}

@@ -21,8 +21,11 @@ export async function runCommand(work: () => Promise<void>): Promise<never> {
 
 function explain(error: unknown): string {
   if (error instanceof CodedError) {
-    const lines = error.problems.map((problem) => `  ${problem.pointer.replace(/^#\/?/, "")}: ${problem.message}`);
+    const lines = error.problems.map(
+      (problem) => `  ${problem.pointer.replace(/^#\/?/, "")}: ${problem.message}`,
+    );
     return lines.length === 0 ? error.message : lines.join("\n");
   }
-  return error instanceof Error ? (process.env.DEBUG ? (error.stack ?? error.message) : error.message) : String(error);
+  if (!(error instanceof Error)) return String(error);
+  return process.env.DEBUG ? (error.stack ?? error.message) : error.message;
 }

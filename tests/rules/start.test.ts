@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { passwordProblem } from "@/lib/access/password";
 import { clientAddress } from "@/lib/access/client-address";
-import { refuseExposedDemo } from "@/lib/access/installation";
+import { boundHost, refuseExposedDemo } from "@/lib/access/installation";
 import { readEnv } from "@/lib/core/env";
 import { newId } from "@/lib/core/ids";
 import { testSettings } from "../factories/database";
@@ -50,6 +50,18 @@ describe("a demo database", () => {
       expect(() => refuseExposedDemo({ HOST: name, ALLOW_DEMO: false }, { demo: false })).not.toThrow();
     },
   );
+});
+
+describe("the address that is bound", () => {
+  const served = { HOST: "127.0.0.1", NODE_ENV: "production" };
+
+  it("is that of the command line, and every one when there is none", () => {
+    expect(boundHost(["node", "next", "start", "--hostname", "0.0.0.0"], served)).toBe("0.0.0.0");
+    expect(boundHost(["node", "next", "start", "--hostname=10.0.0.1"], served)).toBe("10.0.0.1");
+    expect(boundHost(["node", "next", "start", "-H", "localhost"], served)).toBe("localhost");
+    expect(boundHost(["node", "next", "start"], served)).toBe("::");
+    expect(boundHost(["node", "start-server.js"], { ...served, NODE_ENV: "development" })).toBe("127.0.0.1");
+  });
 });
 
 describe("a new password", () => {
