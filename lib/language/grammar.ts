@@ -1,3 +1,4 @@
+import { parseUnit } from "@/lib/units";
 import type { Findings } from "./diagnostics";
 import { limits } from "./limits";
 import { tokenSpan, type Token } from "./token";
@@ -186,11 +187,16 @@ class Judge {
 
   private missingOperator(token: Token, previous: Token | undefined): null {
     const before = previous ? quoted(previous) : "a value";
-    if (previous?.kind === "number" && token.kind === "name" && previous.end === token.start)
+    if (previous?.kind === "number" && token.kind === "name" && previous.end === token.start) {
+      const isUnit = parseUnit(token.text).ok;
+      const product = `\`${previous.text}*${token.text}\``;
       return this.fault(token, "missing-operator", `between ${before} and ${quoted(token)} stands no sign.`, {
-        hint: `Write \`${previous.text}*${token.text}\`, or "${previous.text} ${token.text}" for a quantity with unit.`,
-        insert: { title: "Multiply", at: token, text: "*" },
+        hint: isUnit
+          ? `Write "${previous.text} ${token.text}" for a quantity with unit, or ${product} for a product.`
+          : `Write ${product}.`,
+        ...(!isUnit && { insert: { title: "Multiply", at: token, text: "*" } }),
       });
+    }
     return this.fault(token, "missing-operator", `between ${before} and ${quoted(token)} stands no sign.`, {
       hint: this.level.isCall
         ? "Write a comma between arguments, or `*` to multiply."

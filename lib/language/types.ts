@@ -114,7 +114,7 @@ export type Statement =
  * Temperature reading of a value whose dimension is temperature (language rules of weights):
  * weight 1 is an absolute temperature, 0 a difference, other weights are unfinished sums;
  * `none` marks a product or power that came from an absolute one and has no reading until `as_temperature`.
- * Values of every other dimension carry weight 0.
+ * Values of every other dimension carry weight 0; a power of temperature (T⁴) may carry `none`, so that its root does.
  */
 export type TemperatureReading = { readonly weight: Rational } | "none";
 

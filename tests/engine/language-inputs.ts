@@ -6,6 +6,7 @@ import {
   type ProgramSource,
 } from "@/lib/language";
 import type { PropertyName } from "@/lib/language";
+import { isTemperature } from "@/lib/units";
 
 /** Short ways to declare what a working is checked against. Labels play no part in the checks. */
 
@@ -139,8 +140,8 @@ export function typeOf(expression: string): string {
   const errors = diagnostics.filter((diagnostic) => diagnostic.severity === "error");
   const type = lines[0]?.type;
   if (errors.length > 0 || !type) return errors.map((diagnostic) => diagnostic.code).join(", ");
-  const name =
-    lines[0]?.quantity?.name ?? (type.temperature === "none" ? "no reading" : (lines[0]?.unit ?? ""));
+  const unread = type.temperature === "none" && isTemperature(type.dimension);
+  const name = unread ? "no reading" : (lines[0]?.quantity?.name ?? lines[0]?.unit ?? "");
   if (!type.length) return name;
   const { table: rows, plus } = type.length;
   return `${name} × ${rows ?? ""}${plus === 0 ? "" : plus > 0 ? `+${plus}` : plus}`;

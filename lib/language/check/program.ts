@@ -65,7 +65,7 @@ class ProgramCheck {
     source.conditions.forEach((condition) => this.condition(condition));
     judgeResults(source, state, findings);
     if (!this.ended) this.judgeUncalled();
-    remarkUnused(source, this.reads, state, findings);
+    if (!this.ended) remarkUnused(source, this.reads, state, findings);
     return {
       diagnostics: inReadingOrder(findings.diagnostics),
       lines: this.reads.flatMap((read, i) => this.report(read, i)),
