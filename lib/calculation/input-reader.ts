@@ -145,18 +145,23 @@ export class ValueReader {
   private notANumber(number: DeclaredNumber, given: unknown): void {
     const unit = number.unit.symbol;
     const plain = unit === "1" ? "a number" : `a number in ${unit}`;
-    let example = unit === "1" ? "" : ` or { "value": 25, "unit": "${unit}" }`;
-    if (typeof given === "string") {
-      const amount = parseAmount(given, { expect: number.quantity, shorthand: true });
-      if (amount.ok && amount.value.unit) {
-        example = ` or { "value": ${amount.value.value}, "unit": "${amount.value.unit.symbol}" }`;
-      }
-    }
     const said = typeof given === "string" ? `the text “${given.slice(0, 60)}”` : "no number";
-    this.problem("invalid-input", `${this.name()} is ${said}. Send ${plain}${example}.`, {
+    this.problem("invalid-input", `${this.name()} is ${said}. Send ${plain}${this.mend(number, given)}.`, {
       ...receivedOf(given),
       expected: plain,
     });
+  }
+
+  /** How a text would be sent as a quantity: exactly, where it can be read; with both readings, where it has two. */
+  private mend({ quantity }: DeclaredNumber, given: unknown): string {
+    if (typeof given !== "string") return " or an object with value and unit";
+    const amount = parseAmount(given, { expect: quantity, shorthand: true });
+    if (!amount.ok) {
+      const { suggestions } = amount.fault;
+      return suggestions.length > 0 ? `, for example ${suggestions.slice(0, 2).join(" or ")}` : "";
+    }
+    const { value, unit } = amount.value;
+    return unit ? `, or { "value": ${value}, "unit": "${unit.symbol}" }` : `, without quotes: ${value}`;
   }
 
   /** Judges a value that is not clearly inside; false with the problem told. */

@@ -1,7 +1,8 @@
 import { type PropertyName, type PropertyReader, RunFault } from "@/lib/language";
 import { nearlyEqual } from "@/lib/language/runtime/comparison";
 import { NumericFault } from "@/lib/numeric/fault";
-import { formatSignificant, fromSi, parseUnit } from "@/lib/units";
+import { fromSi, parseUnit } from "@/lib/units";
+import { amountText } from "./amount-text";
 import type { CompiledMaterial } from "./compiled-material";
 import type { CompiledProperty } from "./compiled-property";
 import { propertyQuantities } from "./property-quantity";
@@ -9,8 +10,8 @@ import { propertyQuantities } from "./property-quantity";
 /** A temperature in words, in the unit that the property's own data use. */
 export function temperatureText(kelvin: number, unitText: string): string {
   const reading = parseUnit(unitText);
-  if (!reading.ok) return `${formatSignificant(kelvin, 6)} K`;
-  return `${formatSignificant(fromSi(kelvin, reading.value, "absolute"), 6)} ${reading.value.symbol}`;
+  const value = reading.ok ? fromSi(kelvin, reading.value, "absolute") : kelvin;
+  return amountText(Number(value.toPrecision(6)), reading.ok ? reading.value.symbol : "K");
 }
 
 /** Furthest reading outside the valid range that a run was allowed. */

@@ -26,6 +26,7 @@ import type { Definition, Limit, Requirement, Result } from "./definition";
 import { type InputPlan, inputPlans } from "./input-plan";
 import { type MessagePart, messageParts } from "./message-text";
 import { checkDefinition } from "./program";
+import { type RunCost, runCost } from "./run-cost";
 
 /** How a value of the run is shown. */
 export interface Display {
@@ -89,6 +90,7 @@ export interface Prepared {
   readonly lineOf: ReadonlyMap<string, LinePlan>;
   /** What the declared units mean, where they need a remark. */
   readonly unitRemarks: readonly string[];
+  readonly cost: RunCost;
 }
 
 const usualDigits = 4;
@@ -244,5 +246,6 @@ export function prepare(raw: Definition): Prepared {
     planOf,
     lineOf,
     unitRemarks: declaredRemarks(plans, results),
+    cost: runCost(program),
   };
 }
