@@ -1,3 +1,4 @@
+import { prefixes } from "./catalogue/prefixes";
 import { dimensionless, multiply, power } from "./dimension";
 import { exact, exactOne, exactToNumber, multiplyExact, powerExact, type Exact } from "./exact";
 import { unreadable, type Place } from "./fault";
@@ -73,8 +74,13 @@ export function assemble(given: readonly Term[]): Assembled {
 
 const isOne = (exponent: Rational): boolean => exponent.n === 1 && exponent.d === 1;
 
+const tens: ReadonlyMap<string, Exact> = new Map(
+  prefixes.map((prefix) => [prefix.symbol, exact(`1e${prefix.exponent}`)]),
+);
+
 function entryFactor({ row, prefix }: Entry): Exact {
-  return prefix ? multiplyExact(row.factor, exact(`1e${prefix.exponent}`)) : row.factor;
+  const ten = prefix && tens.get(prefix.symbol);
+  return ten ? multiplyExact(row.factor, ten) : row.factor;
 }
 
 /** Equal units on the same side of the stroke become one with the sum of their powers. */

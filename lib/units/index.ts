@@ -3,16 +3,7 @@
  * Everything is data and pure functions; nothing here keeps state.
  */
 export * from "./types";
-export {
-  addRational,
-  multiplyRational,
-  negateRational,
-  rational,
-  rationalFromNumber,
-  rationalText,
-  rationalToNumber,
-  sameRational,
-} from "./rational";
+export { addRational, multiplyRational, rational, rationalFromNumber, rationalToNumber } from "./rational";
 export {
   dimension,
   dimensionKey,
@@ -27,7 +18,7 @@ export {
 export { parseUnit, unitNotices } from "./parse-unit";
 export { parseUcum } from "./ucum";
 export { parseNumber } from "./number";
-export { parseAmount, type Amount } from "./amount";
+export { parseAmount } from "./amount";
 export { fromSi, toSi } from "./scale";
 export {
   compatibleUnits,

@@ -36,9 +36,8 @@ const plainDigits = (text: string): string =>
 /** Reads the number with which a text begins at `from`, or null when none begins there. Throws `ReadError`. */
 export function scanNumber(text: string, from: number): ScannedNumber | null {
   const signText = match(sign, text, from)?.[0] ?? "";
-  const start =
-    match(blanks, text, from + signText.length)!.index +
-    match(blanks, text, from + signText.length)![0].length;
+  const afterSign = from + signText.length;
+  const start = afterSign + (match(blanks, text, afterSign)?.[0].length ?? 0);
   const minus = signText === "" || signText === "+" ? "" : "-";
 
   const ten = match(tenAlone, text, start);
@@ -46,19 +45,13 @@ export function scanNumber(text: string, from: number): ScannedNumber | null {
 
   const body = match(grouped, text, start) ?? match(plain, text, start);
   if (!body) return null;
-  let end = start + body[0].length;
-  let exponent = "0";
-  const letter = match(letterExponent, text, end);
-  const power = letter ? null : match(tenExponent, text, end);
-  if (letter) exponent = asciiMinus(letter[0].slice(1));
-  if (power) exponent = exponentText(power[1], power[2] ?? power[3]);
-  end += (letter ?? power)?.[0].length ?? 0;
-  const mantissa = decimalText(
-    body[0],
-    { start, end: start + body[0].length },
-    exponent === "0" ? "" : text.slice(start + body[0].length, end),
-  );
-  return finite(text, from, end, `${minus}${mantissa}e${exponent}`);
+  const bodyEnd = start + body[0].length;
+  const letter = match(letterExponent, text, bodyEnd);
+  const power = letter ? null : match(tenExponent, text, bodyEnd);
+  const tail = (letter ?? power)?.[0] ?? "";
+  const exponent = letter ? asciiMinus(tail.slice(1)) : exponentText(power?.[1], power?.[2] ?? power?.[3]);
+  const mantissa = decimalText(body[0], { start, end: bodyEnd }, tail);
+  return finite(text, from, bodyEnd + tail.length, `${minus}${mantissa}e${exponent}`);
 }
 
 function exponentText(plainText: string | undefined, raised: string | undefined): string {

@@ -1,4 +1,5 @@
 import { assemble, tenEntry, type Assembled, type Term } from "./assemble";
+import { cuts, longestWord } from "./cuts";
 import { sameDimension } from "./dimension";
 import { ReadError } from "./fault";
 import { parseProduct, type Factor } from "./grammar";
@@ -18,26 +19,10 @@ const degreeLetters: ReadonlyMap<string, string> = new Map([
 
 const mostPieces = 4;
 const mostReadings = 200;
-const longestWord = 12;
-
-/** One way to cut a word into units. */
-type Pieces = readonly Entry[];
 
 function pieceReadings(piece: string): Entry[] {
   const degree = degreeLetters.get(piece);
   return [lookup(piece), degree === undefined ? null : lookup(degree)].filter((entry) => entry !== null);
-}
-
-function cuts(word: string, most = mostPieces): Pieces[] {
-  if (word === "") return [[]];
-  if (most === 0) return [];
-  const found: Pieces[] = [];
-  for (let length = 1; length <= word.length; length += 1) {
-    const rest = cuts(word.slice(length), most - 1);
-    for (const entry of rest.length > 0 ? pieceReadings(word.slice(0, length)) : [])
-      for (const pieces of rest) found.push([entry, ...pieces]);
-  }
-  return found;
 }
 
 /** The exponent belongs to the last piece: `hft²` is h·ft². A word that is joined keeps its side of the stroke. */
@@ -48,7 +33,7 @@ function termsOf(factor: Factor): Term[][] {
     return entry ? [[{ ...factor, entry }]] : [];
   }
   const side = factor.exponent.n < 0 ? { n: -1, d: 1 } : one;
-  return cuts(factor.word).map((pieces) =>
+  return cuts(factor.word, mostPieces, pieceReadings).map((pieces) =>
     pieces.map((entry, i) => ({
       ...factor,
       entry,

@@ -1,4 +1,5 @@
-import { lookup, plainWords } from "./lookup";
+import { cuts } from "./cuts";
+import { entrySymbol, lookup, plainWords } from "./lookup";
 
 interface Explanation {
   readonly message: string;
@@ -43,7 +44,7 @@ export function explain(word: string): Explanation | null {
 
 const mostSuggestions = 3;
 
-/** Known words nearest to one that is not known: other capitals first, then few changed letters. */
+/** Known words nearest to one that is not known: other capitals first, then two units joined, then few changed letters. */
 export function nearestUnits(word: string): readonly string[] {
   const typed = word.slice(0, 40);
   const lower = typed.toLowerCase();
@@ -55,7 +56,14 @@ export function nearestUnits(word: string): readonly string[] {
     .filter(({ known, distance }) => distance <= most && distance < Math.max(known.length, typed.length))
     .sort((a, b) => a.distance - b.distance || a.known.length - b.known.length)
     .map(({ known }) => known);
-  return [...new Set(near)].slice(0, mostSuggestions);
+  return [...new Set([...joinedUnits(typed), ...near])].slice(0, mostSuggestions);
+}
+
+/** `kgK` → kg·K: two units without a sign between them. Shorter words are typing errors as a rule. */
+function joinedUnits(word: string): string[] {
+  if (word.length < 3) return [];
+  const read = (piece: string) => [lookup(piece)].filter((entry) => entry !== null);
+  return cuts(word, 2, read).map((pieces) => pieces.map(entrySymbol).join("·"));
 }
 
 /** `KG` → kg, `mpa` → MPa and mPa, `Kw` → kW: every spelling with other capitals that is read. */

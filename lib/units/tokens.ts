@@ -1,7 +1,6 @@
 import { plainWord } from "./look-alikes";
 
-export type TokenKind =
-  "word" | "number" | "power" | "superscript" | "times" | "per" | "open" | "close" | "other";
+type TokenKind = "word" | "number" | "power" | "superscript" | "times" | "per" | "open" | "close" | "other";
 
 /** A piece of a unit's text. `spaced`: blanks stand before it. */
 export interface Token {
@@ -71,7 +70,7 @@ export function tokens(text: string, known: (word: string) => boolean): Token[] 
     };
     found.push(nextToken(text, at, known, token));
   }
-  return joinDegrees(found);
+  return withoutStops(joinDegrees(found));
 }
 
 function nextToken(
@@ -103,7 +102,7 @@ function hyphen(
 ): Token {
   const digits = match(/\d+/y, text, at + 1);
   if (digits !== "") return token("superscript", 1 + digits.length, `-${digits}`);
-  return /\p{L}/u.test(text.charAt(at + 1)) ? token("times", 1, "·") : token("other", 1, "-");
+  return /[\p{L}°]/u.test(text.charAt(at + 1)) ? token("times", 1, "·") : token("other", 1, "-");
 }
 
 /** `° C` and `deg F` are one word; `Δ °C` is one as well. */
@@ -123,4 +122,13 @@ function joinDegrees(found: readonly Token[]): Token[] {
     }
   }
   return joined;
+}
+
+/** `in.`, `sq. ft`: a full stop of an abbreviation is no sign of multiplication. */
+function withoutStops(found: readonly Token[]): Token[] {
+  return found.filter((token, i) => {
+    if (token.kind !== "times" || token.text !== ".") return true;
+    const before = found[i - 1]?.text;
+    return i === 0 || (i < found.length - 1 && before !== "sq" && before !== "cu");
+  });
 }

@@ -89,6 +89,7 @@ describe("quantities", () => {
     ["J", "plain", "energy", "J"],
     ["Pa", "plain", "pressure", "Pa"],
     ["1", "plain", "ratio", "1"],
+    ["1/s", "plain", "rate", "1/s"],
     ["K", "absolute", "temperature", "°C"],
     ["K", "difference", "temperature difference", "K"],
   ] as const)("a result in %s (%s) is called %s in %s", (text, kind, name, preferred) => {

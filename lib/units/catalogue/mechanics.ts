@@ -56,7 +56,7 @@ const pressure = unitRows({ mass: 1, length: -1, time: -2 }, [
   ["mmHg",      "",               "",                 "133.322387415",   none,         null,        NIST],
   ["cmHg",      "",               "",                 "1333.22387415",   none,         null,        NIST],
   ["inHg",      "",               "",                 "3386.388640341",  none,         null,        NIST],
-  ["mmH2O",     "mmWC mmWG", "",                "9.80665",         none,         "mm[H2O]",   NIST],
+  ["mmH2O",     "mmWC mmWG mmWS", "",                "9.80665",         none,         "mm[H2O]",   NIST],
   ["cmH2O",     "cmWC",     "",                 "98.0665",         none,         "cm[H2O]",   NIST],
   ["mH2O",      "mWC mWS",   "",                 "9806.65",         none,         "m[H2O]",    NIST],
   ["inH2O",     "inWC inWG iwg", "",            "249.08891",       none,         "[in_i'H2O]", NIST],

@@ -38,7 +38,6 @@ export interface Prefix {
 /** What a unit's row allows. Only prefixes that its users write, so that no sign can be read in two ways. */
 export const none: readonly PrefixSymbol[] = [];
 export const milli: readonly PrefixSymbol[] = ["m"];
-export const kilo: readonly PrefixSymbol[] = ["k"];
 export const kiloMega: readonly PrefixSymbol[] = ["k", "M"];
 export const upward: readonly PrefixSymbol[] = ["k", "M", "G", "T"];
 export const downward: readonly PrefixSymbol[] = ["m", "µ", "n", "p", "f"];

@@ -25,6 +25,7 @@ export const quantityRows: readonly QuantityRow[] = [
   ["volume",                          "m³ L cm³ mm³ in³ ft³ gal",                            [1e-12, 1e6]],
   ["wavenumber",                      "1/m 1/cm 1/mm 1/in 1/ft",                             [0, 1e9]],
   ["time",                            "s min h d a ms µs",                                   [0, 1e10]],
+  ["rate",                            "1/s 1/min 1/h 1/d 1/a",                               [0, 1e12]],
   ["frequency",                       "Hz 1/s 1/min 1/h kHz MHz rpm",                        [0, 1e12]],
   ["velocity",                        "m/s km/h cm/s mm/s ft/s ft/min mph",                  [0, 100]],
   ["acceleration",                    "m/s² g_n ft/s²",                                      [0, 1000]],
