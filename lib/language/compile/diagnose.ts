@@ -63,8 +63,13 @@ function search(program: TypedProgram, frame: Frame, line: number | null, visit:
   try {
     visit(walk);
   } catch (error) {
-    if (!(error instanceof WalkAbandoned)) throw error;
-    throw fault("the value is not finite.", {});
+    if (error instanceof WalkAbandoned) throw fault("the value is not finite.", {});
+    if (!(error instanceof RunFault) || error.symbol !== null) throw error;
+    if (error.code === "not-finite" && walk.refused) {
+      const origin = trace(walk, walk.refused.typed, firstFault(walk.refused.value));
+      throw fault(...sentence(program, walk, origin.typed, origin.place));
+    }
+    throw new RunFault(error.code, `${prefix}${error.message}`, place ?? {}, error.details);
   }
 }
 

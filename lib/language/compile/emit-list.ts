@@ -203,9 +203,14 @@ function computeListElement(writer: FunctionWriter, value: Value, name: string, 
       return remember(writer, value, sum, loop);
     }
     case "drop_first":
-      return remember(writer, value, `${writer.list(list, region)}[${loop.index} + 1]`, loop);
-    case "drop_last":
-      return remember(writer, value, `${writer.list(list, region)}[${loop.index}]`, loop);
+    case "drop_last": {
+      const buffer = writer.list(list, region);
+      if (lengthOf(value).plus < 0) {
+        writer.faults++;
+        region.code.push(`requireLength(${writer.length(lengthOf(value))});`);
+      }
+      return remember(writer, value, `${buffer}[${loop.index}${name === "drop_first" ? " + 1" : ""}]`, loop);
+    }
     case "reverse": {
       const n = writer.length(lengthOf(list));
       return remember(writer, value, `${writer.list(list, region)}[${n} - 1 - ${loop.index}]`, loop);

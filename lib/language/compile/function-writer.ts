@@ -130,12 +130,7 @@ export class FunctionWriter {
     const key = `length ${length.table} ${length.plus}`;
     const known = this.loaded.get(key);
     if (known) return known;
-    const name = this.load("n", `${rows} + ${length.plus}`.replace("+ -", "- "), key);
-    if (length.plus < 0) {
-      this.faults++;
-      this.prologue.push(`if (${name} < 0) requireLength(${name});`);
-    }
-    return name;
+    return this.load("n", `${rows} + ${length.plus}`.replace("+ -", "- "), key);
   }
 
   /** Register of scratch room for a list of that length. */

@@ -39,6 +39,8 @@ export class Walk {
   private readonly slots = new Map<number, WalkValue>();
   private steps = 0;
   private judging = true;
+  /** Last value of a body of a special form that was not finite. */
+  refused: { readonly typed: Typed; readonly value: WalkValue } | null = null;
 
   constructor(
     private readonly program: TypedProgram,
@@ -194,7 +196,12 @@ export class Walk {
       this.slots.set(typed.slot, x);
       return this.value(typed.body);
     };
-    const number = (x: number): number => asNumber(body(x));
+    const number = (x: number): number => {
+      const value = asNumber(body(x));
+      // Solvers refuse such a value without knowing where it came from.
+      if (!Number.isFinite(value)) this.refused = { typed: typed.body, value };
+      return value;
+    };
     if (typed.node === "fixed-point") return this.solved(body, this.fixedPoint(typed, body));
     const lower = asNumber(this.value(typed.lower));
     const upper = asNumber(this.value(typed.upper));

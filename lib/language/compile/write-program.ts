@@ -140,6 +140,7 @@ function writeLine(writer: FunctionWriter, graph: Graph, index: number): Value {
 
 function writeList(writer: FunctionWriter, value: Value, index: number, length: ListLength): void {
   const { top } = writer;
+  if (length.plus < 0) writer.faults++;
   const room = writer.assign(top, "b", `room(F.values, ${index}, ${writer.length(length)})`);
   writer.fill(value, room, length);
   if (value.length) top.registers.set(value.id, room);

@@ -87,6 +87,7 @@ export function requireLength(n: number): void {
 export function room(values: (number | Float64Array)[], index: number, n: number): Float64Array {
   const present = values[index];
   if (present instanceof Float64Array && present.length === n) return present;
+  requireLength(n);
   const made = new Float64Array(n);
   values[index] = made;
   return made;
