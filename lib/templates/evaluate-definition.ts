@@ -1,6 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { permit } from "@/lib/access/permit";
+import { Definition } from "@/lib/calculation/definition";
 import { engineVersion } from "@/lib/calculation/engine";
 import type { RunRequest } from "@/lib/calculation/evaluation";
 import { materialsNeeded } from "@/lib/calculation/execute";
@@ -13,22 +14,23 @@ import { materialSnapshots } from "@/lib/materials/snapshots";
 import { requestOf } from "./run-revision";
 import type { DefinitionEvaluation } from "./schemas";
 
-/** Runs a definition that is not saved. Throws `definition-invalid` with its diagnostics. */
+/**
+ * Runs a definition that is not saved. Its working is checked where it runs, away from other requests when it is
+ * long. Throws `definition-invalid` with its diagnostics.
+ */
 export async function evaluateDefinition(
   actor: Actor,
   input: RunRequest & { definition?: unknown },
   call: Call = plainCall,
 ): Promise<DefinitionEvaluation> {
   permit(actor, "definition.evaluate");
-  const { definition, check, diagnostics } = checkDefinition(input.definition);
-  if (definition === null || check?.program == null) {
-    throw new CodedError(
-      "definition-invalid",
-      "The definition has errors; see the diagnostics.",
-      [...call.problems],
-      { diagnostics },
-    );
+  const parsed = Definition.safeParse(input.definition);
+  if (!parsed.success) {
+    const { diagnostics } = checkDefinition(input.definition);
+    const detail = "The definition has errors; see the diagnostics.";
+    throw new CodedError("definition-invalid", detail, [...call.problems], { diagnostics });
   }
+  const definition = parsed.data;
   const request = requestOf(actor, input);
   const hash = definitionHash(definition);
   const evaluation = await withProblems(call.problems, async () => {
