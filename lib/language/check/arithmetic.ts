@@ -2,28 +2,20 @@ import {
   addRational,
   divide,
   isDimensionless,
-  isTemperature,
   multiply,
   multiplyRational,
   power,
   rational,
   sameDimension,
-  type Dimension,
   type Rational,
 } from "@/lib/units";
 import { limits } from "../limits";
 import type { Expression, NumberType, Typed } from "../types";
 import type { Context } from "./context";
 import { replace } from "./place";
-import {
-  addReadings,
-  exactOrNull,
-  exponentOfTemperature,
-  holdsAbsolute,
-  isPowerOfTemperature,
-  productReading,
-  scaleReading,
-} from "./reading";
+import { addReadings, exactOrNull, holdsAbsolute, productReading, scaleReading } from "./reading";
+import { warnOfAbsoluteProduct } from "./absolute-product";
+import { beyondReach, withinReach } from "./reach";
 import { castHint, commonLength, dimensionsDiffer, type Operand } from "./unify";
 import { constantNode, literalZero, numberType, numberValue, withLength, type NumberValue } from "./value";
 import { describe } from "./words";
@@ -216,39 +208,8 @@ function productType(
     operator === "*" ? multiply(a.dimension, b.dimension) : divide(a.dimension, b.dimension),
   );
   if (!dimension || !withinReach(dimension)) return beyondReach(expression, context);
-  warnOfAbsolute(operator, operands, expression, context);
+  warnOfAbsoluteProduct(operator, operands, expression, context);
   return numberType(dimension, productReading(dimension, [a, b]));
-}
-
-/** `h*T_s`: an absolute temperature times something per kelvin, where a difference is probably meant. */
-function warnOfAbsolute(
-  operator: "*" | "/",
-  [left, right]: readonly [Operand, Operand],
-  expression: BinaryExpression,
-  context: Context,
-): void {
-  if (left.value.law || right.value.law) return;
-  const temperature = [left, right].find(
-    ({ value }) => isTemperature(value.type.dimension) && holdsAbsolute(value.type),
-  );
-  if (!temperature || (operator === "/" && temperature === right)) return;
-  const other = temperature === left ? right : left;
-  const exponent = exponentOfTemperature(other.value.type.dimension);
-  const perKelvin = exponent.d === 1 && exponent.n === (operator === "*" ? -1 : 1);
-  // T1/T2 and 1/T compare temperatures with each other; an input in 1/K (an expansion coefficient) does not.
-  const ofTemperaturesOnly =
-    isPowerOfTemperature(other.value.type.dimension) && (operator === "/" || holdsAbsolute(other.value.type));
-  if (!perKelvin || ofTemperaturesOnly) return;
-  const { place } = context;
-  place.tell({
-    severity: "warning",
-    code: "absolute-product",
-    span: expression.span,
-    message:
-      `${place.quote(expression.span)} ${operator === "*" ? "multiplies" : "divides"} the absolute temperature ` +
-      `${place.quote(temperature.expression.span)} ${operator === "*" ? "with" : "by"} ${describe(other.value.type)}.`,
-    hint: "A temperature difference is probably meant.",
-  });
 }
 
 function powerType(
@@ -282,32 +243,4 @@ function powerType(
   const dimension = exactOrNull(() => power(type.dimension, literal));
   if (!dimension || !withinReach(dimension)) return beyondReach(expression, context);
   return numberType(dimension, productReading(dimension, [type]));
-}
-
-/** Root of a dimension, for `sqrt` and `cbrt`. */
-export function rootType(type: NumberType, degree: number): NumberType | null {
-  if (type.literalZero) return type;
-  const dimension = exactOrNull(() => power(type.dimension, rational(1, degree)));
-  if (!dimension || !withinReach(dimension)) return null;
-  return numberType(dimension, productReading(dimension, [type]), type.length);
-}
-
-/** Type of a product of two values without literals, for integrals. */
-export function productOf(a: NumberType, b: NumberType): NumberType | null {
-  const dimension = exactOrNull(() => multiply(a.dimension, b.dimension));
-  if (!dimension || !withinReach(dimension)) return null;
-  return numberType(dimension, productReading(dimension, [a, b]));
-}
-
-function withinReach(dimension: Dimension): boolean {
-  return dimension.every(({ n, d }) => Math.abs(n) <= limits.exponent && d <= limits.exponent);
-}
-
-export function beyondReach(expression: Expression, context: Context): null {
-  return context.place.fault(
-    expression.span,
-    "dimension-limit",
-    `${context.place.quote(expression.span)} has a dimension with an exponent above ${limits.exponent}. ` +
-      `The limit is ${limits.exponent}.`,
-  );
 }

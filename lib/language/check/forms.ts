@@ -2,7 +2,7 @@ import { isDimensionless, isTemperature } from "@/lib/units";
 import type { SpecialFormName, SpecialFormRow } from "../functions";
 import { limits } from "../limits";
 import type { Expression, NumberType, Typed } from "../types";
-import { beyondReach, productOf } from "./arithmetic";
+import { beyondReach, productOf } from "./reach";
 import { withLocals, type Check, type Context } from "./context";
 import { isAbsolute, isDifference } from "./reading";
 import { alike, asNumber, finished, type Operand } from "./unify";

@@ -2,7 +2,7 @@ import { isDimensionless, isTemperature } from "@/lib/units";
 import type { FunctionRow } from "../functions";
 import { limits } from "../limits";
 import type { Expression, ListLength, NumberType } from "../types";
-import { beyondReach, rootType } from "./arithmetic";
+import { beyondReach, rootType } from "./reach";
 import type { Context } from "./context";
 import { replace } from "./place";
 import { holdsAbsolute } from "./reading";

@@ -1,6 +1,7 @@
 import type { Expression } from "../types";
 import type { Context } from "./context";
-import { check, unknownFunction } from "./expression";
+import { check } from "./expression";
+import { unknownFunction } from "./references";
 import type { FunctionSymbol } from "./symbols";
 
 /**
