@@ -2,7 +2,13 @@ import "server-only";
 import { MessageChannel } from "node:worker_threads";
 import type { CompiledMaterial } from "@/lib/calculation/compiled-material";
 import type { Definition } from "@/lib/calculation/definition";
-import type { Evaluation, RowsOutcome, RowsRequest, RunRequest } from "@/lib/calculation/evaluation";
+import type {
+  Evaluation,
+  RowOutcome,
+  RowsOutcome,
+  RowsRequest,
+  RunRequest,
+} from "@/lib/calculation/evaluation";
 import { evaluate, evaluateRows, type MaterialSnapshots, type Prepared } from "@/lib/calculation/execute";
 import { leftOver } from "@/lib/calculation/execute-rows";
 import type { Material } from "@/lib/calculation/material";
@@ -11,8 +17,14 @@ import { Ended, Pool } from "./pool";
 import { Programs } from "./programs";
 import type { Answer, Progress, SentMaterial, Task } from "./protocol";
 
-const secondsOfRun = 2;
-const secondsOfRows = 10;
+export interface TimeLimits {
+  /** Seconds that one run may take. */
+  readonly run: number;
+  /** Seconds that a request with many rows may take. */
+  readonly rows: number;
+}
+
+const usualLimits: TimeLimits = { run: 2, rows: 10 };
 /** Steps of about 10 ns that may run beside other requests: some milliseconds. */
 const mostStepsInProcess = 500_000;
 /** Definitions with longer workings are checked and compiled in a worker only. */
@@ -47,8 +59,9 @@ function resultOf<Result>(answer: Answer<Result>): Result {
   throw new CodedError(code, message, problems, extra);
 }
 
-function neverBegan(): CodedError {
-  return new CodedError("busy", "Many calculations are running. Try again in a few seconds.");
+function endedOrThrow(error: unknown): Ended {
+  if (error instanceof Ended) return error;
+  throw error;
 }
 
 /** Runs of definitions: closed forms in the server's own thread, everything that may take long in worker threads. */
@@ -57,6 +70,8 @@ export class Compute {
   private readonly pool = new Pool();
   private readonly definitionTexts = new WeakMap<Definition, string>();
   private readonly materialTexts = new WeakMap<Material, string>();
+
+  constructor(private readonly limits: TimeLimits = usualLimits) {}
 
   /**
    * Runs a definition known by its hash. Throws `CodedError` as `evaluate` of the engine does, `definition-invalid`,
@@ -72,18 +87,9 @@ export class Compute {
     if (here) return evaluate(here.prepared, request, here.materials);
     const task: Task = { kind: "run", ...this.sent(hash, definition, materials), request };
     try {
-      return resultOf(await this.pool.run<Evaluation>(task, secondsOfRun * 1000));
+      return resultOf(await this.pool.run<Evaluation>(task, this.limits.run * 1000));
     } catch (error) {
-      if (!(error instanceof Ended)) throw error;
-      if (error.reason === "never-began") throw neverBegan();
-      throw CodedError.from([
-        {
-          pointer: "#/inputs",
-          code: "budget-exceeded",
-          message: `The run took longer than ${secondsOfRun} s and was ended. Take fewer terms, narrower intervals or shorter tables.`,
-          limit: `${secondsOfRun} s`,
-        },
-      ]);
+      throw this.tooLong(endedOrThrow(error));
     }
   }
 
@@ -97,12 +103,14 @@ export class Compute {
     const here = this.inProcess(hash, definition, request, materials);
     if (here) return evaluateRows(here.prepared, request, here.materials);
     const { port1, port2 } = new MessageChannel();
-    let progress: Progress = { units: {}, rows: [] };
-    port1.on("message", (message: Progress) => {
-      progress = message;
+    const finished: RowOutcome[] = [];
+    let units: RowsOutcome["units"] | null = null;
+    port1.on("message", (progress: Progress) => {
+      units = progress.units;
+      finished.push(...progress.rows);
     });
     port1.unref();
-    const milliseconds = secondsOfRows * 1000;
+    const milliseconds = this.limits.rows * 1000;
     const task: Task = {
       kind: "rows",
       ...this.sent(hash, definition, materials),
@@ -112,16 +120,27 @@ export class Compute {
     };
     try {
       // One row alone ends by its fuel; the worker itself stops between rows, so the thread is ended a little later.
-      return resultOf(await this.pool.run<RowsOutcome>(task, milliseconds + secondsOfRun * 1000, [port2]));
+      const hardLimit = milliseconds + this.limits.run * 1000;
+      return resultOf(await this.pool.run<RowsOutcome>(task, hardLimit, [port2]));
     } catch (error) {
-      if (!(error instanceof Ended)) throw error;
-      if (error.reason === "never-began") throw neverBegan();
-      const rows = [...progress.rows];
-      for (let i = rows.length; i < request.rows.length; i++) rows.push(leftOver(i, secondsOfRows));
-      return { units: progress.units, rows };
+      const ended = endedOrThrow(error);
+      // Without units no row was begun: the definition itself took the time.
+      if (units === null) throw this.tooLong(ended);
+      const rows = request.rows.map((_, i) => finished[i] ?? leftOver(i, this.limits.rows));
+      return { units, rows };
     } finally {
       port1.close();
     }
+  }
+
+  private tooLong(ended: Ended): CodedError {
+    if (ended.reason === "out-of-memory") {
+      const message = "The run needs more memory than a run may have. Take shorter tables or fewer lines.";
+      return CodedError.from([{ pointer: "#/inputs", code: "budget-exceeded", message, limit: "memory" }]);
+    }
+    const limit = `${this.limits.run} s`;
+    const message = `The run took longer than ${limit} and was ended. Take fewer terms, narrower intervals or shorter tables.`;
+    return CodedError.from([{ pointer: "#/inputs", code: "budget-exceeded", message, limit }]);
   }
 
   /** Ends the worker threads; they begin again with the next run. */

@@ -33,10 +33,21 @@ async function workerFile(): Promise<string> {
 
 /** Why a task was ended from outside. */
 export class Ended extends Error {
-  constructor(readonly reason: "too-long" | "never-began") {
+  constructor(readonly reason: "too-long" | "out-of-memory") {
     super(`The task was ended: ${reason}.`);
     this.name = "Ended";
   }
+}
+
+function reasonOf(error: unknown, outcome: "running" | "too-long" | "never-began"): unknown {
+  if (outcome === "too-long") return new Ended("too-long");
+  const code = error instanceof Error && "code" in error ? error.code : null;
+  if (code === "ERR_WORKER_OUT_OF_MEMORY") return new Ended("out-of-memory");
+  const full = error instanceof Error && /queue/i.test(error.message);
+  if (outcome === "never-began" || full) {
+    return new CodedError("busy", "Many calculations are running. Try again in a few seconds.");
+  }
+  return error;
 }
 
 /** Worker threads for what may take long. A task that overruns is ended together with its thread. */
@@ -71,15 +82,15 @@ export class Pool {
     const controller = new AbortController();
     const queued = performance.now();
     let begun: number | null = null;
-    let ended: Ended | null = null;
+    let outcome: "running" | "too-long" | "never-began" = "running";
     let timer: NodeJS.Timeout | undefined;
     const look = () => {
       const now = performance.now();
       if (begun === null && Atomics.load(task.started, 0) === 1) begun = now;
-      if (begun === null && now - queued > longestWait) ended = new Ended("never-began");
+      if (begun === null && now - queued > longestWait) outcome = "never-began";
       // The first look sees the beginning up to one limit late, never early.
-      if (begun !== null && now - begun >= milliseconds) ended = new Ended("too-long");
-      if (ended) controller.abort();
+      if (begun !== null && now - begun >= milliseconds) outcome = "too-long";
+      if (outcome !== "running") controller.abort();
       else timer = setTimeout(look, begun === null ? 50 : Math.max(1, milliseconds - (now - begun)));
       timer?.unref();
     };
@@ -91,11 +102,7 @@ export class Pool {
         transferList: [...transfer],
       })) as Answer<Result>;
     } catch (error) {
-      if (ended) throw ended as Ended;
-      if (error instanceof Error && /queue/i.test(error.message)) {
-        throw new CodedError("busy", "Many calculations are running. Try again in a few seconds.");
-      }
-      throw error;
+      throw reasonOf(error, outcome);
     } finally {
       clearTimeout(timer);
     }

@@ -54,7 +54,7 @@ export type Answer<Result> =
 export type RunAnswer = Answer<Evaluation>;
 export type RowsAnswer = Answer<RowsOutcome>;
 
-/** Rows finished so far. */
+/** Rows finished since the message before. */
 export interface Progress {
   readonly units: RowsOutcome["units"];
   readonly rows: RowOutcome[];

@@ -12,7 +12,8 @@ import type { Answer, Progress, RowsTask, RunTask, SentMaterial, Task } from "./
 
 const programs = new Programs();
 const contents = new Lru<Material>(200);
-const progressEvery = 200;
+/** Milliseconds between messages about finished rows. */
+const progressEvery = 5;
 
 function materialsOf(sent: readonly SentMaterial[]): MaterialSnapshots {
   const snapshots = Object.fromEntries(
@@ -35,16 +36,19 @@ function runOne(task: RunTask): Evaluation {
 
 function runRows(task: RowsTask): RowsOutcome {
   const run = new RowsRun(preparedOf(task), task.request, materialsOf(task.materials));
+  task.progress.postMessage({ units: run.units, rows: [] } satisfies Progress);
   const end = performance.now() + task.milliseconds;
   const rows: RowOutcome[] = [];
-  let told = performance.now();
+  let toldAt = performance.now();
+  let told = 0;
   for (let i = 0; i < run.count; i++) {
     const now = performance.now();
-    if (now > end) rows.push(leftOver(i, task.milliseconds / 1000));
-    else rows.push(run.evaluate(i));
-    if (now - told < progressEvery) continue;
-    told = now;
-    task.progress.postMessage({ units: run.units, rows } satisfies Progress);
+    if (now - toldAt >= progressEvery && rows.length > told) {
+      task.progress.postMessage({ units: run.units, rows: rows.slice(told) } satisfies Progress);
+      toldAt = now;
+      told = rows.length;
+    }
+    rows.push(now > end ? leftOver(i, task.milliseconds / 1000) : run.evaluate(i));
   }
   task.progress.close();
   return { units: run.units, rows };

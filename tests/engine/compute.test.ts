@@ -92,11 +92,9 @@ describe("runs through the pool", () => {
       liningMaterials,
     );
     expect(units.T_shell).toEqual({ unit: "°C", ucum: "Cel" });
-    expect(outcomes.map((row) => ("problem" in row ? row.problem.errors?.[0]?.pointer : row.status))).toEqual([
-      "caution",
-      "#/rows/1/T_hot",
-      "caution",
-    ]);
+    expect(outcomes.map((row) => ("problem" in row ? row.problem.errors?.[0]?.pointer : row.status))).toEqual(
+      ["caution", "#/rows/1/T_hot", "caution"],
+    );
   });
 });
 
@@ -115,6 +113,33 @@ describe("hostile definitions", () => {
     await refusedWith(compute.evaluate(definitionHash(definition), definition, {}, {}));
     clearInterval(heart);
     expect(beats).toBeGreaterThan(5);
+  });
+
+  it("ends a run that overruns its time from outside, and goes on serving", async () => {
+    const impatient = new Compute({ run: 0.2, rows: 0.2 });
+    const slow = oneLine("y = series(n, 1, 1e9, bessel_j(0, x*n))");
+    const error = await refusedWith(impatient.evaluate(definitionHash(slow), slow, {}, {}));
+    expect(error.problems).toEqual([expect.objectContaining({ code: "budget-exceeded", limit: "0.2 s" })]);
+    const quick = oneLine("y = series(n, 1, 3, x*n)");
+    const run = await impatient.evaluate(definitionHash(quick), quick, {}, {});
+    expect(run.results.y?.value).toBe(6);
+    await impatient.close();
+  });
+
+  it("answers the rows that were not reached in time as budget-exceeded and keeps the finished ones", async () => {
+    const impatient = new Compute({ run: 0.3, rows: 0.3 });
+    const definition = oneLine("y = series(n, 1, 100000*x, exp(-n/1000))");
+    const rows = [{ x: 1 }, { x: 1 }, ...Array.from({ length: 200 }, () => ({ x: 5 })), { x: 1e5 }];
+    const { rows: outcomes } = await impatient.evaluateRows(
+      definitionHash(definition),
+      definition,
+      { rows },
+      {},
+    );
+    expect(outcomes).toHaveLength(rows.length);
+    expect(outcomes[0]).toMatchObject({ status: "ok" });
+    expect(outcomes.at(-1)).toMatchObject({ problem: { code: "budget-exceeded" } });
+    await impatient.close();
   });
 
   it("refuses a definition with errors with its diagnostics, also when a worker found them", async () => {
