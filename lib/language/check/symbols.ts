@@ -58,7 +58,7 @@ export interface FunctionSymbol {
   readonly read: ReadStatement;
 }
 
-export interface InputSymbol {
+interface InputSymbol {
   readonly is: "input";
   readonly declaration: InputDeclaration;
 }

@@ -171,7 +171,7 @@ export function castHint(operand: Operand, context: Context) {
   };
 }
 
-export function zeroForTemperature(expression: Expression, context: Context): null {
+function zeroForTemperature(expression: Expression, context: Context): null {
   const { span } = expression;
   return context.place.fault(span, "zero-temperature", "0 is no absolute temperature without its unit.", {
     hint: 'Write "0 °C" or "0 K".',
