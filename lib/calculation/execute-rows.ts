@@ -74,7 +74,7 @@ export class RowsRun {
   }
 
   private outcome(): RowOutcome {
-    const { prepared, inputs } = this;
+    const { prepared } = this;
     const { stop, cautions } = this.judge();
     const status: Status = stop ? "stop" : cautions.length > 0 ? "caution" : "ok";
     const results: Record<string, number | number[]> = {};
