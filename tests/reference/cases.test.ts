@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { coldRuns } from "./cases/cold";
 import { finRuns } from "./cases/fins";
+import { generationRuns } from "./cases/generation";
 import { jointRuns } from "./cases/joints";
 import { materialRuns } from "./cases/materials";
 import { pipeRuns } from "./cases/pipes";
@@ -15,6 +16,7 @@ import { templateSlugs } from "./shelf";
 
 const groups: readonly CaseRuns[] = [
   wallRuns,
+  generationRuns,
   pipeRuns,
   jointRuns,
   finRuns,
