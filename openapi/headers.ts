@@ -33,13 +33,8 @@ export const headerDocuments = {
 } as const;
 
 export const idempotencyHeader = z.object({
-  "Idempotency-Key": z
-    .string()
-    .min(1)
-    .max(257)
-    .optional()
-    .meta({
-      description:
-        "1 to 255 printable characters; the same request again is given the first answer for 24 hours.",
-    }),
+  "Idempotency-Key": z.string().min(1).max(257).optional().meta({
+    description:
+      "1 to 255 printable characters; the same request again is given the first answer for 24 hours.",
+  }),
 });

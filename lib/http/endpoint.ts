@@ -24,7 +24,8 @@ import { jsonReply, problemReply, type HeaderValues } from "./reply";
 /** The hall that every call of the interface passes: who, how often, what; then the verb; then the only way out. */
 
 export interface RouteContext {
-  params: Promise<Record<string, string | string[] | undefined>>;
+  /** Nothing for an address without parameters. */
+  params: Promise<Record<string, string | string[] | undefined> | undefined>;
 }
 export type Handler = (request: Request, context: RouteContext) => Promise<Response>;
 
@@ -106,9 +107,9 @@ function handler(operation: Operation, admit: (request: Request) => Promise<Admi
   };
 }
 
-function textParams(params: Record<string, string | string[] | undefined>): Record<string, string> {
+function textParams(params: Awaited<RouteContext["params"]>): Record<string, string> {
   return Object.fromEntries(
-    Object.entries(params).filter((entry): entry is [string, string] => typeof entry[1] === "string"),
+    Object.entries(params ?? {}).filter((entry): entry is [string, string] => typeof entry[1] === "string"),
   );
 }
 

@@ -27,7 +27,8 @@ export async function evaluateDefinition(
   const parsed = Definition.safeParse(input.definition);
   if (!parsed.success) {
     const { diagnostics } = checkDefinition(input.definition);
-    const detail = "The definition has errors; see the diagnostics.";
+    const first = diagnostics.find(({ severity }) => severity === "error");
+    const detail = `The definition has errors. ${first?.message ?? ""}`.trim();
     throw new CodedError("definition-invalid", detail, [...call.problems], { diagnostics });
   }
   const definition = parsed.data;

@@ -36,7 +36,7 @@ export const checkDefinition = operation({
     },
     failure: {
       summary: "A member that is not known",
-      body: { definitoin: {} },
+      body: { definition, definitoin: {} },
       code: "unknown-member",
       detail: "“definitoin” is not known here. Did you mean “definition”?",
       errors: [
@@ -105,7 +105,7 @@ export const evaluateDefinition = operation({
       summary: "A definition with an error",
       body: { definition: { ...definition, working: "R = t/kk" } },
       code: "definition-invalid",
-      detail: "The definition has errors; see the diagnostics.",
+      detail: "The definition has errors. Line 1: `kk` is not known here.",
     },
   },
 });

@@ -14,6 +14,8 @@ import { materialView } from "../examples";
 
 const tag = "Materials";
 const scope = "materials:read";
+const colderThanItsData =
+  "The thermal conductivity of Fireclay brick was asked at 20 K. It is valid from 478 K to 1478 K (Incropera & DeWitt, Fundamentals of Heat and Mass Transfer, Table A.3). Choose a material whose range holds this temperature, or allow extrapolation.";
 const unknownMaterial = {
   summary: "No such material",
   params: { slug: "firebrick" },
@@ -138,7 +140,7 @@ export const getPropertyValue = operation({
         unit: "W/(m·K)",
         ucum: "W/(m.K)",
         T: { value: 700, unit: "K" },
-        source: "Handbook value",
+        source: "Incropera & DeWitt, Fundamentals of Heat and Mass Transfer, Table A.3",
         basis: "from memory",
         cautions: [],
       },
@@ -148,14 +150,12 @@ export const getPropertyValue = operation({
       params: { slug: "fireclay-brick", name: "k" },
       query: { T: "20 K" },
       code: "outside-validity",
-      detail:
-        "The thermal conductivity of Fireclay brick was asked at 20 K. It is valid from 478 K to 1478 K.",
+      detail: colderThanItsData,
       errors: [
         {
           pointer: "#/query/T",
           code: "outside-validity",
-          message:
-            "The thermal conductivity of Fireclay brick was asked at 20 K. It is valid from 478 K to 1478 K.",
+          message: colderThanItsData,
         },
       ],
     },

@@ -49,18 +49,18 @@ const run = {
 } as const;
 
 const failure = {
-  summary: "A unit that does not fit",
-  body: { inputs: { t: { value: 4, unit: "furlongs/K" } } },
+  summary: "A unit of another quantity",
+  body: { inputs: { t: { value: 4, unit: "K" } } },
   code: "unit-mismatch",
-  detail: "furlongs/K is no unit of length.",
+  detail: "Thickness: K does not measure length. Units that do: mm, m, cm.",
   errors: [
     {
       pointer: "#/inputs/t/unit",
       code: "unit-mismatch",
-      message: "furlongs/K is no unit of length.",
-      received: "furlongs/K",
+      message: "Thickness: K does not measure length. Units that do: mm, m, cm.",
+      received: "K",
       expected: "length",
-      acceptedUnits: ["mm", "m", "in", "ft"],
+      acceptedUnits: ["mm", "m", "cm", "µm", "in", "ft"],
     },
   ],
 } as const;
@@ -128,7 +128,7 @@ const rowsExamples = {
       engine: "1.0.0",
       units: { q: { unit: "BTU/(h·ft²)", ucum: "[Btu_IT]/(h.[ft_i]2)" }, Q: { unit: "W", ucum: "W" } },
       rows: [
-        { status: "ok", results: { q: 32.968, Q: 104 } },
+        { status: "ok", results: { R: 1.25, q: 32.967826385327655, Q: 104 } },
         {
           problem: {
             code: "out-of-range",
