@@ -6,8 +6,9 @@ const config: NextConfig = {
   // Native or worker-starting packages are loaded from node_modules, not bundled.
   serverExternalPackages: ["piscina", "@libsql/client", "@node-rs/argon2"],
   turbopack: { root: import.meta.dirname },
-  // Without it the reference page's bundle fails with "refract is not a function".
-  experimental: { turbopackModuleFragments: true },
+  // Without it the reference page's bundle fails with "refract is not a function"; in development it makes other pages
+  // fail with a stack overflow.
+  experimental: { turbopackModuleFragments: process.env.NODE_ENV === "production" },
   headers: async () => [
     {
       source: "/:path*",

@@ -36,6 +36,7 @@ export default async function HomePage() {
               {recent.map((template) => (
                 <li key={template.slug} className="border-b border-soft last:border-b-0">
                   <Link
+                    prefetch={false}
                     href={paths.template(template.slug)}
                     className="flex min-h-11 items-center justify-between gap-4 px-6 py-2 hover:bg-film max-md:px-4"
                   >
@@ -61,6 +62,7 @@ export default async function HomePage() {
               {records.items.map((record) => (
                 <li key={record.number} className="border-b border-soft last:border-b-0">
                   <Link
+                    prefetch={false}
                     href={paths.record(record.number)}
                     className="grid grid-cols-[88px_minmax(0,1fr)_auto] items-center gap-3 px-6 py-2 hover:bg-film max-md:px-4"
                   >
@@ -86,6 +88,7 @@ export default async function HomePage() {
                 {items.map((template) => (
                   <li key={template.slug}>
                     <Link
+                      prefetch={false}
                       href={paths.template(template.slug)}
                       className="block py-1 underline decoration-transparent underline-offset-[3px] hover:decoration-ink max-md:py-3"
                     >

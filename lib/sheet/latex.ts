@@ -294,7 +294,7 @@ function functionPiece(
       return atom(`j_{${list}}`);
     default:
       return atom(
-        `${named[name] ?? (name.includes("_") || name.length > 3 ? `\\operatorname{${escapeLatex(name.replace(/_/g, " "))}}` : symbolLatex(name))}\\left(${list}\\right)`,
+        `${named[name] ?? (name.includes("_") || name.length > 3 ? `\\operatorname{${escapeLatex(name)}}` : symbolLatex(name))}\\left(${list}\\right)`,
       );
   }
 }

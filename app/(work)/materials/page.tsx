@@ -42,7 +42,7 @@ export default async function MaterialsPage({
         {page.items.length === 0 ? (
           <EmptyState title={filtered ? "No material fits these filters." : "There are no materials yet."}>
             {filtered ? (
-              <Link href={paths.materials} className="underline">
+              <Link prefetch={false} href={paths.materials} className="underline">
                 Show all materials
               </Link>
             ) : null}
@@ -67,7 +67,7 @@ const columns = [
   {
     head: "Material",
     cell: (row: MaterialItem) => (
-      <Link href={paths.material(row.slug)} className="group block">
+      <Link prefetch={false} href={paths.material(row.slug)} className="group block">
         <span className="font-[550] underline decoration-transparent underline-offset-[3px] group-hover:decoration-ink">
           {row.name}
         </span>

@@ -47,13 +47,13 @@ export default async function RecordsPage({
         {page.items.length === 0 ? (
           <EmptyState title={filtered ? "No record fits these filters." : "No run has been kept yet."}>
             {filtered ? (
-              <Link href={paths.records} className="underline">
+              <Link prefetch={false} href={paths.records} className="underline">
                 Show all records
               </Link>
             ) : (
               <>
                 Open a{" "}
-                <Link href={paths.templates} className="underline">
+                <Link prefetch={false} href={paths.templates} className="underline">
                   template
                 </Link>
                 , fill its form and press “Keep record”.
@@ -78,7 +78,7 @@ const columns = [
   {
     head: "Record",
     cell: (row: RecordItem) => (
-      <Link href={paths.record(row.number)} className="group block">
+      <Link prefetch={false} href={paths.record(row.number)} className="group block">
         <span className="num whitespace-nowrap font-medium underline decoration-transparent underline-offset-[3px] group-hover:decoration-ink">
           {row.number}
         </span>

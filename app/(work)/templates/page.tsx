@@ -48,7 +48,7 @@ export default async function TemplatesPage({
         {page.items.length === 0 ? (
           <EmptyState title={filtered ? "No template fits these filters." : "There are no templates yet."}>
             {filtered ? (
-              <Link href={paths.templates} className="underline">
+              <Link prefetch={false} href={paths.templates} className="underline">
                 Show all templates
               </Link>
             ) : (
@@ -73,7 +73,7 @@ const columns = [
   {
     head: "Template",
     cell: (row: TemplateItem) => (
-      <Link href={paths.template(row.slug)} className="group block">
+      <Link prefetch={false} href={paths.template(row.slug)} className="group block">
         <span className="font-[550] underline decoration-transparent underline-offset-[3px] group-hover:decoration-ink">
           {row.title}
         </span>

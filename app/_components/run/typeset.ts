@@ -12,7 +12,12 @@ export function typesetWorking(definition: Definition): WorkingRow[] {
   const parameters = new Map(
     parseWorking(definition.working).statements.flatMap((statement) =>
       statement.statement === "function"
-        ? [[statement.name, statement.parameters.map((parameter) => symbolLatex(parameter.name)).join(",\\,")]]
+        ? [
+            [
+              statement.name,
+              statement.parameters.map((parameter) => symbolLatex(parameter.name)).join(",\\,"),
+            ],
+          ]
         : [],
     ),
   );

@@ -8,7 +8,8 @@ import { TextField } from "@/app/_components/ui/text-field";
 
 const sentences: Record<string, string> = {
   CredentialsSignin: "Mail address and password do not match an account that may sign in.",
-  throttled: "Too many attempts for this account. Wait a few minutes and try again.",
+  TooManyAttempts: "Too many attempts for this account. Wait a quarter of an hour and try again.",
+  Unavailable: "Sign-in is not possible at this moment. Try again shortly.",
 };
 
 /** Sign-in with mail address and password. What went wrong is said without telling which of the two it was. */

@@ -43,11 +43,15 @@ export async function RecordReport({ actor, record, revision }: Props) {
       className="mx-auto max-w-page px-8 pb-12 pt-6 outline-none max-md:px-0 max-md:pt-4"
     >
       <nav aria-label="Where this is" className="text-[13px] text-muted max-md:px-4">
-        <Link href={paths.records} className="hover:text-ink">
+        <Link prefetch={false} href={paths.records} className="hover:text-ink">
           Records
         </Link>
         {" · "}
-        <Link href={paths.templateRevision(record.template, record.revision)} className="hover:text-ink">
+        <Link
+          prefetch={false}
+          href={paths.templateRevision(record.template, record.revision)}
+          className="hover:text-ink"
+        >
           {definition.title}, revision {record.revision}
         </Link>
       </nav>
@@ -63,6 +67,7 @@ export async function RecordReport({ actor, record, revision }: Props) {
             <span>kept by {record.createdBy.name}</span>
             {record.tags.map((tag) => (
               <Link
+                prefetch={false}
                 key={tag}
                 href={`${paths.records}?tag=${encodeURIComponent(tag)}`}
                 className="rounded border border-rule bg-sheet px-1.5 text-ink hover:border-ink"
@@ -138,6 +143,7 @@ export async function RecordReport({ actor, record, revision }: Props) {
                 <span key={material.slug}>
                   {index > 0 ? ", " : ""}
                   <Link
+                    prefetch={false}
                     href={paths.material(material.slug)}
                     className="underline decoration-rule underline-offset-[3px]"
                   >

@@ -37,7 +37,7 @@ export function FigurePane({ slug, revision, definition, evaluation, materials, 
     labels: Object.fromEntries(definition.inputs.map((input) => [input.symbol, input.label.toLowerCase()])),
   };
   return (
-    <div className={`order-0 min-w-0 border-b border-rule ${stale ? "opacity-60" : ""}`}>
+    <div className={`min-w-0 border-b border-rule ${stale ? "opacity-60" : ""}`}>
       {drawn.map((figure, index) => (
         <div key={index} className="border-t border-soft px-6 pb-1.5 pt-3.5 first:border-t-0 max-md:px-2">
           <Drawn

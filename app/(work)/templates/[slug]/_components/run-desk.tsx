@@ -97,7 +97,7 @@ export function RunDesk(props: RunDeskProps) {
       </div>
       <div className="grid border border-rule bg-sheet max-md:border-x-0 md:grid-cols-[minmax(340px,412px)_minmax(0,1fr)]">
         <form
-          className="order-1 min-w-0 border-rule max-md:border-b md:border-r"
+          className="order-1 min-w-0 border-rule max-md:border-b md:order-none md:border-r"
           onSubmit={(event) => event.preventDefault()}
           noValidate
           aria-label="Inputs"
@@ -174,7 +174,7 @@ export function RunDesk(props: RunDeskProps) {
             built={built}
             stale={stale}
           />
-          <div className="order-2 grid min-w-0 md:max-lg:grid-cols-1 lg:grid-cols-[1.35fr_1fr]">
+          <div className="order-2 grid min-w-0 md:order-none md:max-lg:grid-cols-1 lg:grid-cols-[1.35fr_1fr]">
             <ResultsPane
               definition={definition}
               evaluation={evaluation}

@@ -38,11 +38,15 @@ export async function TemplateView({ actor, view, current, initial }: Props) {
       className="mx-auto max-w-page px-8 pb-12 pt-6 outline-none max-md:px-0 max-md:pb-24 max-md:pt-4"
     >
       <nav aria-label="Where this is" className="text-[13px] text-muted max-md:px-4">
-        <Link href={paths.templates} className="hover:text-ink">
+        <Link prefetch={false} href={paths.templates} className="hover:text-ink">
           Templates
         </Link>
         {" · "}
-        <Link href={`${paths.templates}?category=${definition.category}`} className="hover:text-ink">
+        <Link
+          prefetch={false}
+          href={`${paths.templates}?category=${definition.category}`}
+          className="hover:text-ink"
+        >
           {categoryNames[definition.category]}
         </Link>
       </nav>
