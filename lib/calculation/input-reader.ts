@@ -266,7 +266,7 @@ export class ValueReader {
         "unknown-material",
         name === ""
           ? `${this.name()} names no material. Give the slug of a material.`
-          : `There is no material “${name.slice(0, 80)}” to be used for ${this.name()}.`,
+          : `${this.name()}: there is no material “${name.slice(0, 80)}”.`,
         { received: name.slice(0, 120), expected: "the slug of an issued material, or slug@revision" },
       );
       return false;
