@@ -41,7 +41,7 @@ describe("reference cases", () => {
     const shelf = Object.values(runs).filter(({ through }) =>
       templateSlugs.includes(through.split(",")[0] ?? ""),
     );
-    expect(shelf.length).toBeGreaterThanOrEqual(95);
+    expect(shelf.length).toBeGreaterThanOrEqual(127);
   });
 
   for (const reference of referenceCases) {

@@ -121,12 +121,28 @@ export const finRuns: CaseRuns = {
     },
   },
   "FN-13": {
-    through: "own working",
+    through: "straight-fin",
     answers: () => {
-      const best = ownWorking(`
-x = balance(u, 0.5, 3, tanh(u) - 3*u/cosh(u)^2)
-eta = tanh(x)/x`);
-      return { mL_opt: best.number("x"), eta_opt: best.number("eta") };
+      // one profile area L·t, a fin so wide that its edges do not count; Q is largest at the best length
+      const profile = 1e-5;
+      const fin = (L: number) =>
+        run("straight-fin", {
+          L: given(L, "m"),
+          t: given(profile / L, "m"),
+          w: given(1e6, "m"),
+          k: 200,
+          h: 25,
+          tip: "adiabatic",
+        });
+      const golden = (Math.sqrt(5) - 1) / 2;
+      let [low, high] = [0.005, 0.2];
+      for (let round = 0; round < 80; round += 1) {
+        const [a, b] = [high - golden * (high - low), low + golden * (high - low)];
+        if (fin(a).number("Q") > fin(b).number("Q")) high = b;
+        else low = a;
+      }
+      const best = (low + high) / 2;
+      return { mL_opt: fin(best).number("m") * best, eta_opt: fin(best).number("eta") };
     },
   },
 };

@@ -72,16 +72,16 @@ q_2 = flux(r_2)`);
     },
   },
   "HG-07": {
-    through: "own working",
+    through: "linear-k-wall",
     answers: (c) => {
-      const wall = ownWorking(`
-g = "${input(c, "q_dot")} W/m³"
-L = "${input(c, "L")} m"
-k = "${input(c, "k")} W/(m·K)"
-T_left = "${input(c, "T_left")} K"
-T_right = "${input(c, "T_right")} K"
-T_mid = (T_left + T_right)/2 + g*L^2/(8*k)
-q = k*(T_left - T_right)/L`);
+      if (input(c, "q_dot") !== 0) throw new Error("The plain wall generates nothing.");
+      const wall = run("linear-k-wall", {
+        t: given(input(c, "L"), "m"),
+        k_ref: input(c, "k"),
+        b: 0,
+        T_hot: given(input(c, "T_left"), "K"),
+        T_cold: given(input(c, "T_right"), "K"),
+      });
       return { T_mid: wall.number("T_mid"), q: wall.number("q") };
     },
   },

@@ -89,14 +89,23 @@ L_eq = R_c*"${input(c, "k")} W/(m·K)"`);
       ),
   },
   "TC-04": {
-    through: "own working",
-    answers: (c) => ({
-      T_c: ownWorking(`
-h = "${input(c, "h")} W/(m²·K)"
-T_inf = "${input(c, "T_inf")} K"
-down = 1/("${input(c, "R_c")} m²·K/W" + "${input(c, "L")} m"/"${input(c, "k")} W/(m·K)" + 1/h)
-T_c = balance(s, T_inf, T_inf + "1000 ΔK", (h + down)*(s - T_inf) - "${input(c, "q")} W/m²")`).number("T_c"),
-    }),
+    through: "device-stack",
+    answers: (c) => {
+      const h = input(c, "h");
+      // below the chip: joint and substrate to the air, for one square metre; above it the film alone
+      const down = run("device-stack", {
+        R_sink: 1 / h,
+        layers: [
+          {
+            t: given(input(c, "L"), "m"),
+            k: input(c, "k"),
+            A: given(1, "m²"),
+            R_c: given(input(c, "R_c"), "m²·K/W"),
+          },
+        ],
+      }).number("R_total");
+      return { T_c: input(c, "T_inf") + input(c, "q") / (h + 1 / down) };
+    },
   },
   "TC-05": {
     through: "contact-conductance",

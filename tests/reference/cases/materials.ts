@@ -142,16 +142,13 @@ square = 1 - 2*${f}/(T + ${f} - 0.305827*${f}^4*T/(T^2 - 1.402958*${f}^8) - 0.01
     },
   },
   "EC-07": {
-    through: "own working",
+    through: "two-phase-k",
     answers: (c) => {
-      const board = ownWorking(`
-t_cu = ${input(c, "n_cu")}*"${input(c, "t_cu")} m"
-t_all = "${input(c, "t_total")} m"
-k_r = "${input(c, "k_fr4")} W/(m·K)"
-k_l = ${input(c, "coverage")}*"${input(c, "k_cu")} W/(m·K)" + (1 - ${input(c, "coverage")})*k_r
-k_in = (t_cu*k_l + (t_all - t_cu)*k_r)/t_all
-k_through = t_all/(t_cu/k_l + (t_all - t_cu)/k_r)`);
-      return { k_inplane: board.number("k_in"), k_through: board.number("k_through") };
+      const k_r = input(c, "k_fr4");
+      // a copper layer with gaps side by side, then the layers of the board along and across
+      const layer = mixture(k_r, input(c, "k_cu"), input(c, "coverage")).number("k_parallel");
+      const board = mixture(k_r, layer, (input(c, "n_cu") * input(c, "t_cu")) / input(c, "t_total"));
+      return { k_inplane: board.number("k_parallel"), k_through: board.number("k_series") };
     },
   },
   "ED-07": {
@@ -220,12 +217,18 @@ k_through = t_all/(t_cu/k_l + (t_all - t_cu)/k_r)`);
     },
   },
   "GP-06": {
-    through: "own working",
+    through: "contact-conductance",
     answers: (c) => {
-      const h = (bar: number) =>
-        ownWorking(
-          `h = "${input(c, "k0")} W/(m·K)"/("${input(c, "d")} m" + "${input(c, "M_1bar")} m"/${bar})`,
-        ).number("h");
+      const joint = (sigma: number, bar: number) =>
+        run("contact-conductance", {
+          sigma_1: given(sigma, "m"),
+          sigma_2: given(sigma, "m"),
+          k_g: input(c, "k0"),
+          M: given(input(c, "M_1bar") / bar, "m"),
+        });
+      // roughness that keeps the surfaces the wanted gap apart; the gap goes with it
+      const sigma = (1e-6 * input(c, "d")) / joint(1e-6, 1).number("Y");
+      const h = (bar: number) => joint(sigma, bar).number("h_g");
       return { h_1bar: h(1), h_10mbar: h(0.01), h_0p1mbar: h(0.0001) };
     },
   },

@@ -21,7 +21,9 @@ function pipe(
   });
 }
 
-const sigma = `rad(s) = eps*sigma_SB*(s^2 + T_amb^2)*(s + T_amb)`;
+/** Radiative coefficient of a grey surface among surroundings. */
+const radiation = (eps: number, T: number, T_amb: number) =>
+  eps * 5.670374419e-8 * (T ** 2 + T_amb ** 2) * (T + T_amb);
 
 export const pipeRuns: CaseRuns = {
   "CY-01": {
@@ -62,25 +64,22 @@ export const pipeRuns: CaseRuns = {
     },
   },
   "CY-04": {
-    through: "own working",
+    through: "insulated-pipe",
     answers: (c) => {
-      const balance = ownWorking(`
-T_amb = "${input(c, "T_amb")} K"
-T_pipe = "${input(c, "T_pipe")} K"
-eps = ${input(c, "emissivity")}
-r_1 = "${input(c, "r1")} m"
-r_2 = "${input(c, "r2")} m"
-${sigma}
-given(s) = 2*pi*r_2*("${input(c, "h_conv")} W/(m²·K)" + rad(s))*(s - T_amb)
-through(s) = 2*pi*"${input(c, "k")} W/(m·K)"*(T_pipe - s)/ln(r_2/r_1)
-T_outer = balance(s, T_amb, T_pipe, through(s) - given(s))
-q_l = through(T_outer)
-h_rad = rad(T_outer)`);
-      return {
-        q_per_m: balance.number("q_l"),
-        T_outer: balance.number("T_outer"),
-        h_rad: balance.number("h_rad"),
-      };
+      const [T_amb, eps] = [input(c, "T_amb"), input(c, "emissivity")];
+      const at = (h_rad: number) =>
+        pipe(
+          [input(c, "r1"), input(c, "r2")],
+          [input(c, "k")],
+          [held, input(c, "h_conv") + h_rad],
+          [input(c, "T_pipe"), T_amb],
+        );
+      let h_rad = 5;
+      for (let round = 0; round < 60; round += 1) {
+        h_rad = radiation(eps, at(h_rad).number("T_surface"), T_amb);
+      }
+      const lagged = at(h_rad);
+      return { q_per_m: lagged.number("q_l"), T_outer: lagged.number("T_surface"), h_rad };
     },
   },
   "CY-08": {
@@ -113,16 +112,29 @@ Q = mc*(T_in - T_out)`);
     },
   },
   "CY-10": {
-    through: "own working",
+    through: "insulated-pipe, lumped-cooldown",
     answers: (c) => {
-      const cooling = ownWorking(`
-mc = "${input(c, "m_w")} kg/m"*"${input(c, "c_w")} J/(kg·K)" + "${input(c, "m_p")} kg/m"*"${input(c, "c_p")} J/(kg·K)"
-r_1 = "${input(c, "r1")} m"
-r_2 = "${input(c, "r2")} m"
-U_l = 1/(ln(r_2/r_1)/(2*pi*"${input(c, "k")} W/(m·K)") + 1/(2*pi*r_2*"${input(c, "h")} W/(m²·K)"))
-T_amb = "${input(c, "T_amb")} K"
-t = mc/U_l*ln(("${input(c, "T0")} K" - T_amb)/("${input(c, "T1")} K" - T_amb))`);
-      return { t: cooling.number("t"), U_l: cooling.number("U_l") };
+      const [T0, T1, T_amb] = [input(c, "T0"), input(c, "T1"), input(c, "T_amb")];
+      const lagged = pipe(
+        [input(c, "r1"), input(c, "r2")],
+        [input(c, "k")],
+        [held, input(c, "h")],
+        [T0, T_amb],
+      );
+      const U_l = 1 / lagged.number("R_l");
+      // one metre as a lumped body: its heat capacity over U_l is the time constant
+      const capacity = input(c, "m_w") * input(c, "c_w") + input(c, "m_p") * input(c, "c_p");
+      const body = run("lumped-cooldown", {
+        rho: 1000,
+        c: 1000,
+        k: 400,
+        V: given(capacity / 1e6, "m³"),
+        A_s: given(1, "m²"),
+        h: U_l,
+        T_0: given(T0, "K"),
+        T_inf: given(T_amb, "K"),
+      });
+      return { t: body.number("tau") * Math.log((T0 - T_amb) / (T1 - T_amb)), U_l };
     },
   },
   "CY-13": {
@@ -146,16 +158,18 @@ t = mc/U_l*ln(("${input(c, "T0")} K" - T_amb)/("${input(c, "T1")} K" - T_amb))`)
     },
   },
   "CY-14": {
-    through: "own working",
+    through: "pipe-surface-balance",
     answers: (c) => {
-      const bare = ownWorking(`
-T_amb = "${input(c, "T_amb")} K"
-T_s = "${input(c, "T_s")} K"
-eps = ${input(c, "emissivity")}
-${sigma}
-h_rad = rad(T_s)
-q_l = pi*"${input(c, "D")} m"*("${input(c, "h_conv")} W/(m²·K)" + h_rad)*(T_s - T_amb)`);
-      return { q_per_m: bare.number("q_l"), h_rad: bare.number("h_rad") };
+      const [D, T_s, T_amb] = [input(c, "D"), input(c, "T_s"), input(c, "T_amb")];
+      const bare = run("pipe-surface-balance", {
+        D: given(D, "m"),
+        t: 0,
+        T_pipe: given(T_s, "K"),
+        T_amb: given(T_amb, "K"),
+        eps: input(c, "emissivity"),
+      });
+      const h_rad = bare.number("h_r");
+      return { q_per_m: Math.PI * D * (input(c, "h_conv") + h_rad) * (T_s - T_amb), h_rad };
     },
   },
   "CY-15": {
@@ -227,30 +241,34 @@ q_best = loss(r_best)`);
     answers: (c) => criticalRadius(input(c, "k"), input(c, "h"), input(c, "r_i")),
   },
   "SP-02": {
-    through: "own working",
+    through: "spherical-shell",
     answers: (c) => {
-      const ball = ownWorking(`
-a = "${input(c, "a")} m"
-k = "${input(c, "k")} W/(m·K)"
-dT = "${input(c, "dT")} ΔK"
-q = 4*pi*k*a*dT
-Nu = q/(4*pi*a^2*dT)*2*a/k`);
-      return { q: ball.number("q"), Nu_D: ball.number("Nu") };
+      const [a, k, dT] = [input(c, "a"), input(c, "k"), input(c, "dT")];
+      const shell = run("spherical-shell", {
+        D_in: given(2 * a, "m"),
+        D_out: given(1e16, "m"),
+        k,
+        T_in: given(300 + dT, "K"),
+        T_out: given(300, "K"),
+      });
+      const q = shell.number("Q");
+      return { q, Nu_D: ((q / (4 * Math.PI * a ** 2 * dT)) * 2 * a) / k };
     },
   },
   "SP-03": {
-    through: "own working",
+    through: "spherical-shell",
     answers: (c) => {
-      const [r1, r2, r3] = inputs(c, "r");
-      const [k1, k2] = inputs(c, "k");
-      const ball = ownWorking(`
-T_o = "${input(c, "T_o")} K"
-R_o = 1/(4*pi*"${r3} m"^2*"${input(c, "h_o")} W/(m²·K)")
-R = (1/(4*pi*"${r1} m"^2*"${input(c, "h_i")} W/(m²·K)") + (1/"${r1} m" - 1/"${r2} m")/(4*pi*"${k1} W/(m·K)")
-  + (1/"${r2} m" - 1/"${r3} m")/(4*pi*"${k2} W/(m·K)") + R_o)
-q = ("${input(c, "T_i")} K" - T_o)/R
-T_s = T_o + q*R_o`);
-      return { q: ball.number("q"), T_s_out: ball.number("T_s") };
+      const r = inputs(c, "r");
+      const shells = inputs(c, "k").map((k, i) =>
+        run("spherical-shell", { D_in: given(2 * r[i]!, "m"), D_out: given(2 * r[i + 1]!, "m"), k }).number(
+          "R",
+        ),
+      );
+      const film = (radius: number, h: number) => 1 / (4 * Math.PI * radius ** 2 * h);
+      const outside = film(r[2]!, input(c, "h_o"));
+      const R = film(r[0]!, input(c, "h_i")) + shells[0]! + shells[1]! + outside;
+      const q = (input(c, "T_i") - input(c, "T_o")) / R;
+      return { q, T_s_out: input(c, "T_o") + q * outside };
     },
   },
   "SP-04": {

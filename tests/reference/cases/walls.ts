@@ -1,5 +1,6 @@
 import { readFileSync } from "node:fs";
 import { fileURLToPath } from "node:url";
+import { simpson } from "../numerical";
 import { input, inputs, type CaseRuns } from "../reference-case";
 import { given, ownWorking, refuses, run, stated } from "../shelf";
 
@@ -149,13 +150,17 @@ export const wallRuns: CaseRuns = {
     },
   },
   "PW-10": {
-    through: "own working",
-    answers: (c) => ({
-      U: ownWorking(`
-R_0 = "${input(c, "R0")} m²·K/W"
-R_1 = "${input(c, "d1")} m"/"${input(c, "k1")} W/(m·K)"
-U = integral(x, 0, 1, 1/(R_0 + x*R_1))   # area mean of the transmittance of a wedge`).number("U"),
-    }),
+    through: "composite-wall",
+    answers: (c) => {
+      // area mean of the transmittance over the wedge, by Simpson's rule
+      const U = (share: number) =>
+        run("composite-wall", {
+          R_si: input(c, "R0"),
+          R_se: 0,
+          layers: [layer(Math.max(share, 1e-12) * input(c, "d1"), input(c, "k1"))],
+        }).number("U");
+      return { U: simpson(U, 0, 1, 400) };
+    },
   },
   "PW-13": {
     through: "own working",
