@@ -2,6 +2,7 @@
 
 import { useId, type ReactNode } from "react";
 import { SymbolText } from "./symbol";
+import { UnitSelect } from "./unit-select";
 
 interface QuantityFieldProps {
   symbol: string;
@@ -32,7 +33,6 @@ export function QuantityField({
   note,
 }: QuantityFieldProps) {
   const id = useId();
-  const offered = units.includes(unit) ? units : [unit, ...units];
   return (
     <div className="grid grid-cols-[minmax(0,1fr)_176px] items-center gap-x-3 py-[5px] max-sm:grid-cols-[minmax(0,1fr)_164px]">
       <label htmlFor={id} className="grid grid-cols-[44px_1fr] items-baseline gap-1.5">
@@ -55,7 +55,7 @@ export function QuantityField({
           aria-describedby={`${id}-note`}
           className="num w-full min-w-0 bg-transparent px-2 text-right font-medium outline-none"
         />
-        {unit === "1" && offered.length === 1 ? (
+        {unit === "1" && units.length === 1 ? (
           <span
             className="min-w-[74px] border-l border-soft px-2 text-[13px] leading-[30px] text-muted max-md:leading-[42px]"
             aria-hidden="true"
@@ -63,18 +63,13 @@ export function QuantityField({
             {"\u2013"}
           </span>
         ) : (
-          <select
+          <UnitSelect
             value={unit}
-            onChange={(event) => onUnit(event.target.value)}
-            aria-label={`Unit of ${label}`}
-            className="w-[82px] rounded-r border-l border-soft bg-transparent px-1.5 text-[13px] text-muted focus-visible:outline-offset-[-2px]"
-          >
-            {offered.map((option) => (
-              <option key={option} value={option} className="bg-sheet text-ink">
-                {option === "1" ? "\u2013" : option}
-              </option>
-            ))}
-          </select>
+            units={units}
+            label={`Unit of ${label}`}
+            onPick={onUnit}
+            className="w-[84px] border-l border-soft pl-2 pr-1 text-[13px]"
+          />
         )}
       </div>
       <div id={`${id}-note`} className="col-span-2 text-[12px] leading-4">

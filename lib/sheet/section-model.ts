@@ -154,7 +154,9 @@ export function sectionModel(figure: SectionFigure, run: Run, known: Known): Sec
   const side = (symbol: string | undefined) => {
     if (!symbol) return null;
     const value = numberOf(run, symbol, "absolute");
-    return value ? { label: known.labels[symbol] ?? symbol, temperature: value.si } : null;
+    // "Fluid temperature" is drawn beside a temperature line: the medium is what there is to say.
+    const label = (known.labels[symbol] ?? symbol).replace(/ temperature$/i, "");
+    return value ? { label, temperature: value.si } : null;
   };
   return {
     shape: figure.shape,

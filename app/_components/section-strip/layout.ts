@@ -2,7 +2,7 @@ import { formatSignificant } from "@/lib/units";
 import { shownIn } from "@/lib/sheet/resolve";
 import type { Hatch, SectionModel } from "@/lib/sheet/section-model";
 import { niceTicks } from "../plot/ticks";
-import { placeLabels, type PlacedLabel } from "./place-labels";
+import { captionBox, placeLabels, type PlacedLabel } from "./place-labels";
 
 /**
  * Projected view in pixels: the section to scale below, the temperature along it above on a scale of its own.
@@ -42,8 +42,8 @@ export interface StripLayout {
     readonly x: number;
     readonly row: number;
   }[];
-  readonly before: { readonly text: string; readonly x: number; readonly y: number } | null;
-  readonly after: { readonly text: string; readonly x: number; readonly y: number } | null;
+  readonly before: PlacedLabel | null;
+  readonly after: PlacedLabel | null;
   /** Left end of the drawn bore or air, and right end of the air outside. */
   readonly leftEdge: number;
   readonly rightEdge: number;
@@ -96,6 +96,26 @@ export function stripLayout(model: SectionModel, width: number): StripLayout {
   const rightEdge = Math.min(width - 8, (faces.at(-1)?.x ?? right) + (model.after ? airWidth : 10));
   const curve = curvePath(model, faces, places, x, y, leftEdge, rightEdge);
 
+  // Where fluid and air are named: above the line on the left, below it on the right unless the chart ends there.
+  const fluidY = model.before ? y(model.before.temperature) : 0;
+  const airY = model.after ? y(model.after.temperature) : 0;
+  const before = model.before
+    ? { text: model.before.label, x: leftEdge + 8, y: fluidY - 7, anchor: "start" as const }
+    : null;
+  const after = model.after
+    ? {
+        text: model.after.label,
+        x: rightEdge,
+        y: airY > chartTop + 40 ? airY + 15 : airY - 7,
+        anchor: "end" as const,
+      }
+    : null;
+  const wholeLine = [
+    ...(model.before ? [{ x: leftEdge, y: fluidY }] : []),
+    ...faces,
+    ...(model.after ? [{ x: rightEdge, y: airY }] : []),
+  ];
+
   const names = model.layers.map((layer, index) => {
     const start = x(places[index] ?? 0);
     const end = x(places[index + 1] ?? 0);
@@ -131,14 +151,16 @@ export function stripLayout(model: SectionModel, width: number): StripLayout {
         y: faces[index]?.y ?? 0,
       })),
       { left: 4, right: width - 4, top: 2, bottom: chartBottom + 30 },
-      faces,
+      {
+        points: faces,
+        line: wholeLine,
+        taken: [before, after].flatMap((caption) => (caption ? [captionBox(caption)] : [])),
+      },
     ),
     layers: names,
     dimensions: dimensionRow(model, names, width),
-    before: model.before
-      ? { text: model.before.label, x: leftEdge + 4, y: y(model.before.temperature) }
-      : null,
-    after: model.after ? { text: model.after.label, x: rightEdge, y: y(model.after.temperature) } : null,
+    before,
+    after,
     leftEdge,
     rightEdge,
   };

@@ -12,11 +12,30 @@ interface Box {
   readonly bottom: number;
 }
 
+/** What is on the paper already. */
+interface Drawn {
+  readonly points: readonly { x: number; y: number }[];
+  readonly line: readonly { x: number; y: number }[];
+  readonly taken: readonly Box[];
+}
+
 const character = 7.8;
+const captionCharacter = 6.3;
 const lineHeight = 16;
 
 function overlaps(a: Box, b: Box): boolean {
   return a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom;
+}
+
+/** Room that a small caption takes. */
+export function captionBox({ text, x, y, anchor }: PlacedLabel): Box {
+  const width = text.length * captionCharacter;
+  return {
+    left: anchor === "start" ? x : x - width,
+    right: anchor === "start" ? x + width : x,
+    top: y - 12,
+    bottom: y + 4,
+  };
 }
 
 /** Does the straight piece between two points pass through the box? Sampled; pieces are short. */
@@ -37,13 +56,15 @@ function crosses(box: Box, from: { x: number; y: number }, to: { x: number; y: n
 export function placeLabels(
   labels: readonly { text: string; x: number; y: number }[],
   frame: Box,
-  line: readonly { x: number; y: number }[],
+  drawn: Drawn,
 ): PlacedLabel[] {
-  const rising = (line.at(-1)?.y ?? 0) < (line[0]?.y ?? 0);
+  const { points, line, taken } = drawn;
+  const rising = (points.at(-1)?.y ?? 0) < (points[0]?.y ?? 0);
   const placed: { label: PlacedLabel; box: Box }[] = [];
   const candidates = [
     [1, -8],
     [-1, -8],
+    [1, -14],
     [-1, 18],
     [1, 18],
     [1, -24],
@@ -56,7 +77,10 @@ export function placeLabels(
     const width = label.text.length * character;
     for (const [side, dy] of candidates) {
       const toRight = rising ? side < 0 : side > 0;
-      const x = label.x + (toRight ? 7 : -7);
+      // Beside the edge of the paper a text moves inward, over its point.
+      const x = toRight
+        ? Math.min(label.x + 7, frame.right - width)
+        : Math.max(label.x - 7, frame.left + width);
       const y = label.y + dy;
       const box: Box = {
         left: toRight ? x : x - width,
@@ -71,7 +95,8 @@ export function placeLabels(
         box.bottom <= frame.bottom;
       const free =
         placed.every((other) => !overlaps(box, other.box)) &&
-        line.every(
+        taken.every((other) => !overlaps(box, other)) &&
+        points.every(
           (point) =>
             !overlaps(box, { left: point.x - 5, right: point.x + 5, top: point.y - 5, bottom: point.y + 5 }),
         ) &&

@@ -281,20 +281,15 @@ function Dimensions({ layout }: { layout: StripLayout }) {
 }
 
 function Surroundings({ layout }: { layout: StripLayout }) {
-  const { before, after } = layout;
-  const near = (y: number) => (y < layout.chart.top + 24 ? y - 7 : y + 15);
   return (
     <g fontSize="12" fill="var(--muted)">
-      {before ? (
-        <text x={before.x + 4} y={before.y - 7}>
-          {before.text}
-        </text>
-      ) : null}
-      {after ? (
-        <text x={after.x} y={near(after.y)} textAnchor="end">
-          {after.text}
-        </text>
-      ) : null}
+      {[layout.before, layout.after].map((caption) =>
+        caption ? (
+          <text key={caption.anchor} x={caption.x} y={caption.y} textAnchor={caption.anchor}>
+            {caption.text}
+          </text>
+        ) : null,
+      )}
     </g>
   );
 }

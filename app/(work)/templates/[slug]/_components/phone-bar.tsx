@@ -1,4 +1,5 @@
 import { NumberText } from "@/app/_components/number-text";
+import { SymbolText } from "@/app/_components/symbol";
 import type { Definition } from "@/lib/calculation/definition";
 import type { Evaluation } from "@/lib/calculation/evaluation";
 
@@ -27,7 +28,7 @@ export function PhoneBar({
           const value = evaluation.results[result.symbol];
           return (
             <span key={result.symbol} className="min-w-0 truncate">
-              <small className="mr-1.5 text-[12px] opacity-80">{result.label}</small>
+              <SymbolText symbol={result.symbol} />{" "}
               <span className="num whitespace-nowrap text-base font-[550]">
                 {value?.value === undefined ? (
                   "\u2013"

@@ -4,6 +4,7 @@ import { NumberText } from "@/app/_components/number-text";
 import { SymbolText } from "@/app/_components/symbol";
 import type { Definition, Result } from "@/lib/calculation/definition";
 import type { Evaluation, ResultValue } from "@/lib/calculation/evaluation";
+import { UnitSelect } from "@/app/_components/unit-select";
 import { unitsFor } from "./use-units";
 
 interface Props {
@@ -107,21 +108,12 @@ function ResultRow({
         {units.length === 1 ? (
           <span>{result.unit === "1" ? "" : result.unit}</span>
         ) : (
-          <select
+          <UnitSelect
             value={value?.unit ?? result.unit}
-            onChange={(event) => onUnit(event.target.value)}
-            aria-label={`Unit of ${result.label}`}
-            className="-ml-1 max-w-[92px] rounded bg-transparent text-muted max-md:min-h-11"
-          >
-            {(units.includes(value?.unit ?? result.unit)
-              ? units
-              : [value?.unit ?? result.unit, ...units]
-            ).map((unit) => (
-              <option key={unit} value={unit} className="bg-sheet text-ink">
-                {unit === "1" ? "\u2013" : unit}
-              </option>
-            ))}
-          </select>
+            units={units}
+            label={`Unit of ${result.label}`}
+            onPick={onUnit}
+          />
         )}
       </td>
     </tr>

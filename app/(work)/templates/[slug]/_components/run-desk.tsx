@@ -7,7 +7,7 @@ import type { MaterialClass } from "@/lib/calculation/material";
 import { makeApplies } from "./applies";
 import { buildRequest, fieldOfPointer } from "./build-request";
 import { ChoiceInput } from "./choice-input";
-import { FigurePane } from "./figure-pane";
+import { CurvesPane, SectionPane } from "./figure-pane";
 import { initialValues, type FieldState, type FormValues } from "./form-state";
 import { LimitsPane } from "@/app/_components/run/limits-pane";
 import { MaterialInput } from "./material-input";
@@ -165,13 +165,10 @@ export function RunDesk(props: RunDeskProps) {
           })}
         </form>
         <section className="contents min-w-0 md:block" aria-label="Run">
-          <FigurePane
-            slug={props.slug}
-            revision={props.revision}
+          <SectionPane
             definition={definition}
             evaluation={evaluation}
             materials={props.materials}
-            built={built}
             stale={stale}
           />
           <div className="order-2 grid min-w-0 md:order-none md:max-lg:grid-cols-1 lg:grid-cols-[1.35fr_1fr]">
@@ -186,6 +183,7 @@ export function RunDesk(props: RunDeskProps) {
             />
             <LimitsPane definition={definition} evaluation={evaluation} stale={stale} />
           </div>
+          <CurvesPane slug={props.slug} revision={props.revision} definition={definition} built={built} />
         </section>
       </div>
       <WorkingTable rows={props.working} evaluation={evaluation} stale={stale} />

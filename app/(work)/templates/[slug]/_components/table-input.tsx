@@ -7,6 +7,7 @@ import type { Column, TableInput as TableDeclaration } from "@/lib/calculation/d
 import { cellState, type CellState, type RowState, type TableState } from "./form-state";
 import { MaterialPicker } from "./material-input";
 import { readAmount } from "./build-request";
+import { UnitSelect } from "@/app/_components/unit-select";
 import { convertText, unitsFor } from "./use-units";
 import { rowsFromClipboard } from "./paste-rows";
 import { PasteDialog } from "./paste-dialog";
@@ -89,18 +90,13 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
                 >
                   <span className="block">{column.label}</span>
                   {column.kind === "number" && column.unit !== "1" ? (
-                    <select
+                    <UnitSelect
                       value={state.units[column.symbol] ?? column.unit}
-                      onChange={(event) => pickUnit(column, event.target.value)}
-                      aria-label={`Unit of ${column.label}`}
-                      className="-ml-1 max-w-[88px] rounded bg-transparent text-[12px] text-muted max-md:min-h-6"
-                    >
-                      {unitsFor(column.quantity, column.unit).map((unit) => (
-                        <option key={unit} value={unit} className="bg-sheet text-ink">
-                          {unit}
-                        </option>
-                      ))}
-                    </select>
+                      units={unitsFor(column.quantity, column.unit)}
+                      label={`Unit of ${column.label}`}
+                      onPick={(unit) => pickUnit(column, unit)}
+                      className="max-w-full text-[12px]"
+                    />
                   ) : null}
                 </th>
               ))}
