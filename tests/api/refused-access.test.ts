@@ -27,7 +27,7 @@ beforeAll(async () => {
   owner = await makePerson({ role: "senior" });
   const made = (more: object = {}) => makeKeyOf(owner, { scopes: all, ratePerMinute: 10_000, ...more });
   good = (await made()).key;
-  elsewhere = (await made({ templates: ["pipe-layers"] })).key;
+  elsewhere = (await made({ templates: ["insulated-pipe"] })).key;
   const revoked = await made();
   await revokeKey(owner, { id: revoked.id });
   refused.revoked = revoked.key;
@@ -127,7 +127,7 @@ describe.each(ofTemplate)("%s", (_id, operation) => {
 describe("lists", () => {
   it("show a limited key its own templates only, and their records only", async () => {
     const templates = await api.call("GET", "/templates?limit=200", { key: elsewhere });
-    expect((templates.json.items as { slug: string }[]).map(({ slug }) => slug)).toEqual(["pipe-layers"]);
+    expect((templates.json.items as { slug: string }[]).map(({ slug }) => slug)).toEqual(["insulated-pipe"]);
     const records = await api.call("GET", "/records", { key: elsewhere });
     expect(records.json.items).toEqual([]);
     expect(
