@@ -3,6 +3,7 @@ import { fileURLToPath } from "node:url";
 import { describe, expect, it } from "vitest";
 import { evaluate } from "@/lib/calculation/execute";
 import { Material } from "@/lib/calculation/material";
+import { checkMaterial } from "@/lib/calculation/check-material";
 import { compileMaterial } from "@/lib/calculation/compiled-material";
 import type { PropertyName } from "@/lib/language";
 import { simpson } from "./numerical";
