@@ -44,10 +44,14 @@ function unitAt(text: string, quantityName: string, path: string, add: Add): Uni
   return null;
 }
 
-function checkPoints(piece: Extract<Piece, { form: "table" }>, path: string, add: Add): void {
+/** Whether the points of a table rise. */
+function checkPoints(piece: Piece, path: string, add: Add): boolean {
+  if (piece.form !== "table") return true;
+  let rising = true;
   piece.points.forEach(([x], i) => {
     const before = piece.points[i - 1]?.[0];
     if (before !== undefined && x <= before) {
+      rising = false;
       add(
         `${path}/points/${i}`,
         "falling-points",
@@ -55,6 +59,7 @@ function checkPoints(piece: Extract<Piece, { form: "table" }>, path: string, add
       );
     }
   });
+  return rising;
 }
 
 /** A table holds between its points only; a logarithm or root only for a positive argument. */
@@ -102,8 +107,7 @@ function checkProperty(
   if (unit && unit.shift !== 0) add(`${path}/unit`, "unit-mismatch", `${unit.symbol} has a zero of its own.`);
   property.pieces.forEach((piece, i) => {
     const at = `${path}/pieces/${i}`;
-    if (argument) checkReach(piece, property, argument, at, add);
-    if (piece.form === "table") checkPoints(piece, at, add);
+    if (checkPoints(piece, at, add) && argument) checkReach(piece, property, argument, at, add);
     if (piece.form === "working") {
       take(
         checkPieceWorking(piece.working, name, property.unit, material.constants, at).diagnostics.map(
@@ -165,15 +169,13 @@ function checkJoints(property: CompiledProperty, add: Add): void {
   const path = `#/properties/${property.name}`;
   const at = (kelvin: number) => temperatureText(kelvin, property.argumentUnit);
   property.pieces.forEach((piece, i) => {
-    for (const end of [piece.min, piece.max]) {
-      const value = piece.value(end);
-      if (!(value > 0 && value < Infinity)) {
-        add(
-          `${path}/pieces`,
-          "not-positive",
-          `The ${propertyQuantities[property.name]} comes out at ${value} (SI) at ${at(end)}. It must be greater than 0.`,
-        );
-      }
+    const bad = [piece.min, piece.max].find((end) => !(piece.value(end) > 0 && piece.value(end) < Infinity));
+    if (bad !== undefined) {
+      add(
+        `${path}/pieces`,
+        "not-positive",
+        `The ${propertyQuantities[property.name]} comes out at ${piece.value(bad)} (SI) at ${at(bad)}. It must be greater than 0.`,
+      );
     }
     const next = property.pieces[i + 1];
     if (!next) return;

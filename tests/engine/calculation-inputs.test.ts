@@ -316,7 +316,7 @@ describe("relations between inputs", () => {
 describe("tables", () => {
   it("read cells in any unit and echo every row", () => {
     const brick = suppliedMaterials["insulating-brick-23"]!;
-    const layers = [
+    const layers: GivenInputs["layers"] = [
       { name: "Brick", t: { value: 9, unit: "in" }, material: "insulating-brick-23@4" },
       { t: 50, material: { value: 0.1, unit: "W/(m·K)", at: { value: 300, unit: "°C" } } },
     ];
@@ -444,7 +444,8 @@ describe("materials", () => {
       "stone-wool-mat",
     ]);
     expect(materialsNeeded(suppliedTemplate("plane-wall"), {})).toEqual([]);
-    const rows = { rows: [{}, { insulation: "puf32" }], common: { insulation: "kapton" } };
+    const given: GivenInputs[] = [{}, { insulation: "puf32" }];
+    const rows = { rows: given, common: { insulation: "kapton" } };
     expect(materialsNeededForRows(pipe, rows).sort()).toEqual(["air", "kapton", "puf32"]);
   });
 });
