@@ -56,6 +56,10 @@ describe("the materials of the shelf", () => {
     },
   );
 
+  it.each(materialSlugs)("%s passes the check without an error or a warning", (slug) => {
+    expect(checkMaterial(material(slug)).diagnostics).toEqual([]);
+  });
+
   it.each(materialSlugs)(
     "%s is positive over its range, joins without a step, and is refused beyond it",
     (slug) => {
