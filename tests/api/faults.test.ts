@@ -119,7 +119,6 @@ describe("bodies", () => {
     ['{"inputs":{"t":Infinity}}', 400, "malformed-json"],
     ['{"inputs":{"\\ud800":1}}', 400, "malformed-json"],
     ['{"inputs":', 400, "malformed-json"],
-    [`{"inputs":{"t":${"[".repeat(5000)}${"]".repeat(5000)}}}`, 400, "malformed-json"],
     ['{"__proto__":{"inputs":{}}}', 422, "unknown-member"],
     ["[]", 422, "invalid-input"],
     ["null", 422, "invalid-input"],
@@ -127,6 +126,11 @@ describe("bodies", () => {
   ])("%s is answered with %i %s", async (body, status, code) => {
     const reply = await run("plane-wall", body);
     expect([reply.status, codeOf(reply)]).toEqual([status, code]);
+  });
+
+  it("nested five thousand deep are refused", async () => {
+    const reply = await run("plane-wall", `{"inputs":{"t":${"[".repeat(5000)}${"]".repeat(5000)}}}`);
+    expect([reply.status, codeOf(reply)]).toEqual([400, "malformed-json"]);
   });
 
   it("of 3 MB are refused, and the connection that sent one serves the next", async () => {

@@ -143,7 +143,7 @@ describe("requests sent again with the same Idempotency-Key", () => {
     expect(await effects(name)).toBe(2);
   });
 
-  it.each(['""', '"unended', "", "two words", '"ü"', "x".repeat(256)])(
+  it.each(['""', '"unended', "", "two words", '"ü"', "long".repeat(64)])(
     "are refused with the key %j",
     async (bad) => {
       const response = await send(await newKey(), bad, { name: "n" }).catch((error: unknown) => error);
