@@ -35,7 +35,7 @@ export function QuantityField({
   const id = useId();
   return (
     <div className="grid grid-cols-[minmax(0,1fr)_176px] items-center gap-x-3 py-[5px] max-sm:grid-cols-[minmax(0,1fr)_164px]">
-      <label htmlFor={id} className="grid grid-cols-[44px_1fr] items-baseline gap-1.5">
+      <label htmlFor={id} className="grid grid-cols-[minmax(44px,max-content)_1fr] items-baseline gap-1.5">
         <SymbolText symbol={symbol} />
         <span>{label}</span>
       </label>

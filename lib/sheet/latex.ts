@@ -1,4 +1,4 @@
-import type { Expression } from "@/lib/language";
+import { languageFunctions, type Expression } from "@/lib/language";
 
 /** LaTeX of a working's expressions, for KaTeX. Pure; escapes everything that comes from a definition's text. */
 
@@ -293,8 +293,13 @@ function functionPiece(
     case "bessel_j_zero":
       return atom(`j_{${list}}`);
     default:
-      return atom(
-        `${named[name] ?? (name.includes("_") || name.length > 3 ? `\\operatorname{${escapeLatex(name)}}` : symbolLatex(name))}\\left(${list}\\right)`,
-      );
+      return atom(`${functionName(name)}\\left(${list}\\right)`);
   }
+}
+
+const builtIn = new Set(languageFunctions.map((row) => row.name));
+
+/** Functions of the language are set upright; those of the working look like the symbol on their left-hand side. */
+function functionName(name: string): string {
+  return named[name] ?? (builtIn.has(name) ? `\\operatorname{${escapeLatex(name)}}` : symbolLatex(name));
 }

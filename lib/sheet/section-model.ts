@@ -32,7 +32,7 @@ export interface SectionModel {
   readonly temperatureUnit: string;
 }
 
-const classHatch: Record<MaterialClass, Hatch> = {
+export const classHatch: Record<MaterialClass, Hatch> = {
   metal: "metal",
   refractory: "refractory",
   masonry: "masonry",

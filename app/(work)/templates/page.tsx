@@ -127,7 +127,7 @@ const columns = [
 ];
 
 function firstSentence(markdown: string): string {
-  const plain = markdown.replace(/[*_`#>]/g, "").trim();
+  const plain = markdown.replace(/[*`#>]/g, "").trim();
   const end = /[.!?](\s|$)/.exec(plain);
   const sentence = end ? plain.slice(0, end.index + 1) : plain;
   return sentence.length > 160 ? `${sentence.slice(0, 157)}…` : sentence;

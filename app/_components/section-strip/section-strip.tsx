@@ -212,7 +212,7 @@ function Section({ layout, id }: { layout: StripLayout; id: string }) {
           strokeDasharray="14 4 2 4"
         />
       )}
-      {round && first.from - layout.leftEdge > 60 ? (
+      {round && layout.before && first.from - layout.leftEdge > 60 ? (
         <LayerName x={(layout.leftEdge + first.from) / 2} y={axis} text="bore" />
       ) : null}
       {layout.layers.map((layer, index) =>

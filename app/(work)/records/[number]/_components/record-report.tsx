@@ -92,7 +92,7 @@ export async function RecordReport({ actor, record, revision }: Props) {
           This record was made with revision {record.revision}, which is now {revision.state}.
         </p>
       )}
-      <div className="grid border border-rule bg-sheet max-md:border-x-0 md:grid-cols-[minmax(340px,412px)_minmax(0,1fr)]">
+      <div className="grid border border-rule bg-sheet max-md:border-x-0 md:grid-cols-[minmax(340px,428px)_minmax(0,1fr)]">
         <InputsTable record={record} definition={definition} />
         <section className="min-w-0" aria-label="Results and limits">
           {section ? (

@@ -109,7 +109,7 @@ export function CurvePlot({
         <ResponsiveContainer width="100%" height="100%">
           <LineChart
             data={rows}
-            margin={{ top: 8, right: 16, bottom: 22, left: 12 }}
+            margin={{ top: 22, right: 16, bottom: 22, left: 12 }}
             accessibilityLayer={false}
           >
             <CartesianGrid stroke="var(--soft)" />
@@ -145,10 +145,9 @@ export function CurvePlot({
               tick={{ fontSize: 12, fill: "var(--ink)", fontFamily: "var(--font-mono)" }}
               label={{
                 value: yUnit === "1" ? "" : yUnit,
-                position: "insideTopLeft",
-                offset: 0,
-                dy: -6,
-                dx: 4,
+                position: "top",
+                offset: 8,
+                dx: 16,
                 fontSize: 12,
                 fill: "var(--muted)",
               }}

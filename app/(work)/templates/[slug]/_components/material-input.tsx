@@ -1,8 +1,10 @@
 "use client";
 
 import { useId } from "react";
+import { HatchSwatch } from "@/app/_components/section-strip/hatches";
 import { SymbolText } from "@/app/_components/symbol";
 import type { MaterialInput as MaterialDeclaration } from "@/lib/calculation/definition";
+import { classHatch } from "@/lib/sheet/section-model";
 import type { MaterialState } from "./form-state";
 import type { MaterialChoice } from "./run-desk";
 
@@ -99,8 +101,12 @@ export function MaterialInput({ input, state, materials, onChange, fault }: Prop
   const chosen = materials.find((material) => material.slug === state.slug);
   return (
     <div className="grid grid-cols-[minmax(0,1fr)_176px] items-start gap-x-3 py-[5px] max-sm:grid-cols-[minmax(0,1fr)_164px]">
-      <label htmlFor={id} className="grid grid-cols-[44px_1fr] items-baseline gap-1.5 pt-1.5">
-        <SymbolText symbol={input.symbol} />
+      <label htmlFor={id} className="grid grid-cols-[44px_1fr] items-center gap-1.5 pt-0.5">
+        {chosen ? (
+          <HatchSwatch hatch={classHatch[chosen.class]} id={`${id}-hatch`} />
+        ) : (
+          <SymbolText symbol={input.symbol} />
+        )}
         <span>{input.label}</span>
       </label>
       <MaterialPicker

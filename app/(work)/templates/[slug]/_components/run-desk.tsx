@@ -95,7 +95,7 @@ export function RunDesk(props: RunDeskProps) {
           onReset={() => form.reset(initialValues(definition))}
         />
       </div>
-      <div className="grid border border-rule bg-sheet max-md:border-x-0 md:grid-cols-[minmax(340px,412px)_minmax(0,1fr)]">
+      <div className="grid border border-rule bg-sheet max-md:border-x-0 md:grid-cols-[minmax(340px,428px)_minmax(0,1fr)]">
         <form
           className="order-1 min-w-0 border-rule max-md:border-b md:order-none md:border-r"
           onSubmit={(event) => event.preventDefault()}

@@ -111,7 +111,7 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
                 {input.columns.map((column, columnIndex) => (
                   <td
                     key={column.symbol}
-                    className={`py-0.5 pr-2 align-middle ${column.kind === "number" ? "w-[86px]" : "min-w-[104px]"}`}
+                    className={`py-0.5 pr-1.5 align-middle ${column.kind === "number" ? "w-[80px]" : "min-w-[98px]"}`}
                   >
                     <Cell
                       column={column}
