@@ -6,13 +6,11 @@ import {
   parseAmount,
   parseUnit,
   type Quantity,
-  quantityByName,
   type Reading,
   toSi,
   type Unit,
 } from "@/lib/units";
 import { amountText } from "./amount-text";
-import { type CompiledMaterial, compileMaterial } from "./compiled-material";
 import {
   absoluteZeroText,
   absoluteZeroTolerance,
@@ -21,18 +19,15 @@ import {
   outsideUsual,
 } from "./declared-number";
 import type { Caution, UsedCell, UsedQuantity } from "./evaluation";
-import type { ChoicePlan, MaterialPlan } from "./input-plan";
-import type { MaterialSnapshots } from "./materials-needed";
-import type { MaterialReader } from "./material-reader";
-import { propertyQuantities } from "./property-quantity";
+import type { ChoicePlan } from "./input-plan";
 
-function isQuantity(
+export function isQuantity(
   given: unknown,
 ): given is { value: number; unit?: string; at?: { value: number; unit: string } } {
   return typeof given === "object" && given !== null && "value" in given && typeof given.value === "number";
 }
 
-function receivedOf(given: unknown): { received?: string | number | boolean | null } {
+export function receivedOf(given: unknown): { received?: string | number | boolean | null } {
   if (typeof given === "string") return { received: given.slice(0, 120) };
   return typeof given === "number" || typeof given === "boolean" || given === null ? { received: given } : {};
 }
@@ -50,7 +45,6 @@ export class ValueReader {
   readonly echo: boolean;
   /** What was read last, when `echo`; null after a problem. */
   used: UsedCell | null = null;
-  readonly allowExtrapolation: boolean;
 
   // Place being read: `inputs/t`, or `inputs/layers/1/k`; in rows of a request `rows/12/t`.
   base: readonly (string | number)[] = ["inputs"];
@@ -60,14 +54,10 @@ export class ValueReader {
   label = "";
   tableLabel = "";
 
-  private readonly materials: MaterialSnapshots;
-  private readonly compiled = new Map<string, CompiledMaterial>();
   private readonly units = new Map<Quantity, Map<string, Reading<Unit>>>();
 
-  constructor(materials: MaterialSnapshots, options: { echo: boolean; allowExtrapolation: boolean }) {
-    this.materials = materials;
-    this.echo = options.echo;
-    this.allowExtrapolation = options.allowExtrapolation;
+  constructor(echo: boolean) {
+    this.echo = echo;
   }
 
   pointer(...further: readonly string[]): string {
@@ -234,117 +224,6 @@ export class ValueReader {
         },
       );
     } else this.used = { text: given };
-  }
-
-  /** Sets the reader to a material or a constant; false with the problem told. */
-  material(plan: MaterialPlan, given: unknown, reader: MaterialReader): boolean {
-    if (typeof given === "string") return this.namedMaterial(plan, given, reader);
-    if (plan.constant && isQuantity(given) && given.unit !== undefined) {
-      return this.constantProperty(plan.constant, given as { value: number; unit: string }, reader);
-    }
-    if (plan.constant && (typeof given === "number" || isQuantity(given))) {
-      const unit = plan.constant.unit;
-      const value = typeof given === "number" ? given : given.value;
-      this.problem(
-        "invalid-input",
-        `${this.name()} is a number without unit. Send { "value": ${value}, "unit": "${unit}" } or the slug of a material.`,
-        { received: value, expected: `a material, or a ${plan.constant.name} with unit` },
-      );
-      return false;
-    }
-    const expected = plan.constant
-      ? `a material, or a ${plan.constant.name} with unit`
-      : "the slug of a material";
-    this.problem("invalid-input", `${this.name()} must be ${expected}.`, { ...receivedOf(given), expected });
-    return false;
-  }
-
-  private namedMaterial(plan: MaterialPlan, name: string, reader: MaterialReader): boolean {
-    const material = this.compiledMaterial(name);
-    if (!material) {
-      this.problem(
-        "unknown-material",
-        name === ""
-          ? `${this.name()} names no material. Give the slug of a material.`
-          : `${this.name()}: there is no material “${name.slice(0, 80)}”.`,
-        { received: name.slice(0, 120), expected: "the slug of an issued material, or slug@revision" },
-      );
-      return false;
-    }
-    const lacking = plan.needs.filter((need) => !material.properties[need]);
-    if (lacking.length > 0) {
-      const words = lacking.map((need) => `${propertyQuantities[need]} (${need})`).join(" and ");
-      this.problem(
-        "invalid-input",
-        `${this.name()}: ${material.name} has no ${words}. Choose a material that has it.`,
-        {
-          received: name,
-          expected: `a material with ${plan.needs.join(", ")}`,
-        },
-      );
-      return false;
-    }
-    reader.useMaterial(material, this.pointer(), this.allowExtrapolation);
-    if (this.echo) this.used = { material: material.slug, revision: material.revision };
-    return true;
-  }
-
-  private compiledMaterial(name: string): CompiledMaterial | null {
-    const known = this.compiled.get(name);
-    if (known) return known;
-    const snapshot = Object.hasOwn(this.materials, name) ? this.materials[name] : undefined;
-    if (!snapshot) return null;
-    const compiled =
-      snapshot.compiled ?? compileMaterial(snapshot.material, snapshot.slug, snapshot.revision);
-    this.compiled.set(name, compiled);
-    return compiled;
-  }
-
-  private constantProperty(
-    quantity: Quantity,
-    given: { value: number; unit: string; at?: { value: number; unit: string } },
-    reader: MaterialReader,
-  ): boolean {
-    const unit = this.unit(given.unit, quantity);
-    if (!unit) return false;
-    const si = toSi(given.value, unit, "plain");
-    if (!Number.isFinite(si) || si <= 0) {
-      this.problem(
-        "out-of-range",
-        `${this.name()}: the ${quantity.name} is ${amountText(given.value, unit.symbol)}. It must be greater than 0.`,
-        { received: given.value, expected: "greater than 0", limit: 0 },
-      );
-      return false;
-    }
-    const at = given.at && this.statedAt(given.at);
-    if (at === null) return false;
-    reader.useConstant(si, this.pointer());
-    if (this.echo) this.used = { constant: usedQuantity(given.value, unit, si), ...(at && { at }) };
-    return true;
-  }
-
-  /** Mean temperature that a constant was stated at; null with the problem told. */
-  private statedAt(at: { value: number; unit: string }): UsedQuantity | null {
-    const temperature = quantityByName("temperature");
-    const reading = parseUnit(at.unit, temperature ? { expect: temperature } : {});
-    if (!reading.ok) {
-      this.problem(reading.fault.code, `${this.name()}: ${reading.fault.message}`, {
-        pointer: this.pointer("at", "unit"),
-        received: at.unit,
-      });
-      return null;
-    }
-    const si = toSi(at.value, reading.value, "absolute");
-    if (si >= absoluteZeroTolerance) return usedQuantity(at.value, reading.value, si);
-    this.problem(
-      "out-of-range",
-      `${this.name()}: the temperature it is stated at lies below absolute zero.`,
-      {
-        pointer: this.pointer("at", "value"),
-        received: at.value,
-      },
-    );
-    return null;
   }
 
   /** Names in a record that nothing here is called. */

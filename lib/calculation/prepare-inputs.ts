@@ -1,20 +1,11 @@
 import { type CompiledProgram, type Frame, RunFault } from "@/lib/language";
-import type { Caution, GivenInputs, UsedCell, UsedValue } from "./evaluation";
+import type { Caution, GivenInputs, UsedValue } from "./evaluation";
 import { ValueReader } from "./input-reader";
-import type { CellPlan, InputPlan, MaterialPlan, TablePlan, ValuePlan } from "./input-plan";
-import { MaterialReader } from "./material-reader";
+import type { CellPlan, InputPlan, MaterialPlan, ValuePlan } from "./input-plan";
+import { MaterialInputs } from "./material-input";
+import type { MaterialReader } from "./material-reader";
 import type { MaterialSnapshots } from "./materials-needed";
-
-const noNumbers = new Float64Array(0);
-const noPlaces = new Int32Array(0);
-
-export interface ReadingOptions {
-  /** Keep what was used in the form of the reply. */
-  readonly echo: boolean;
-  readonly allowExtrapolation: boolean;
-  /** An input left out is missing, even when it has a default. */
-  readonly refuseDefaults: boolean;
-}
+import { readerAt, type ReadingOptions, TableReader } from "./table-reader";
 
 /**
  * Reads the inputs of a request into the frame of a run and gathers all problems, cautions and remarks. One reader
@@ -40,6 +31,8 @@ export class InputsReader {
   private readonly frame: Frame;
   private readonly options: ReadingOptions;
   private readonly conditional: readonly InputPlan[];
+  private readonly materials: MaterialInputs;
+  private readonly tables: TableReader;
 
   constructor(
     program: {
@@ -56,7 +49,9 @@ export class InputsReader {
     this.compiled = program.compiled;
     this.frame = program.frame;
     this.options = options;
-    this.values = new ValueReader(materials, options);
+    this.values = new ValueReader(options.echo);
+    this.materials = new MaterialInputs(this.values, materials, options.allowExtrapolation);
+    this.tables = new TableReader(this.values, this.materials, program.frame, options);
     this.conditional = program.plans.filter(({ applies }) => applies >= 0);
   }
 
@@ -136,7 +131,7 @@ export class InputsReader {
         break;
       }
       case "table":
-        this.readTable(plan, value);
+        this.tables.read(plan, value, this);
     }
     if (values.problems.length > before) this.faulty.add(plan.symbol);
     else if (this.options.echo && values.used !== null) this.used[plan.symbol] = values.used;
@@ -168,7 +163,7 @@ export class InputsReader {
 
   private readMaterial(plan: MaterialPlan, value: unknown): void {
     const { values, frame } = this;
-    const reader = this.readerAt(frame.materials, plan.index);
+    const reader = readerAt(frame.materials, plan.index);
     if (plan.fixed) {
       if (value !== undefined && value !== null && value !== plan.default) {
         const fixed = String(plan.default);
@@ -181,126 +176,11 @@ export class InputsReader {
         );
         return;
       }
-      if (values.material(plan, plan.default, reader)) this.readers.push(reader);
+      if (this.materials.read(plan, plan.default, reader)) this.readers.push(reader);
       return;
     }
     const name = this.orDefault(plan.symbol, value, plan.default);
-    if (name !== null && values.material(plan, name, reader)) this.readers.push(reader);
-  }
-
-  /** Frames are used again, and so are the readers in them. */
-  private readerAt(list: Frame["materials"], index: number): MaterialReader {
-    const present = list[index];
-    if (present instanceof MaterialReader) return present;
-    const reader = new MaterialReader();
-    list[index] = reader;
-    return reader;
-  }
-
-  private readTable(plan: TablePlan, value: unknown): void {
-    const { values } = this;
-    let rows: readonly Record<string, unknown>[];
-    if (value === undefined && !this.options.refuseDefaults) {
-      this.defaulted.push(plan.symbol);
-      rows = plan.defaultRows;
-    } else if (value === undefined || value === null) {
-      values.missing();
-      return;
-    } else if (Array.isArray(value)) rows = value as readonly Record<string, unknown>[];
-    else {
-      values.problem("invalid-input", `${plan.label} must be a list of rows.`, {
-        expected: "a list of rows",
-      });
-      return;
-    }
-    if (rows.length < plan.minRows || rows.length > plan.maxRows) {
-      const few = rows.length < plan.minRows;
-      const limit = few ? plan.minRows : plan.maxRows;
-      values.problem(
-        "out-of-range",
-        `${plan.label} has ${rows.length} ${rows.length === 1 ? "row" : "rows"}; ${few ? "at least" : "at most"} ${limit} ${few ? "are needed" : "are read"}.`,
-        { received: rows.length, expected: `${few ? "at least" : "at most"} ${limit} rows`, limit },
-      );
-      return;
-    }
-    this.readRows(plan, rows, value !== undefined);
-  }
-
-  private readRows(plan: TablePlan, rows: readonly Record<string, unknown>[], given: boolean): void {
-    const { values } = this;
-    const { echo } = this.options;
-    const usedRows: Record<string, UsedCell>[] = [];
-    values.tableLabel = plan.label;
-    this.makeRoom(plan, rows.length);
-    for (let r = 0; r < rows.length; r++) {
-      const row = rows[r]!;
-      values.row = r;
-      values.column = "";
-      values.label = plan.label;
-      if (typeof row !== "object" || row === null || Array.isArray(row)) {
-        values.problem(
-          "invalid-input",
-          `${plan.label}, row ${r + 1}, must be an object with a member for each column.`,
-        );
-        continue;
-      }
-      if (given) values.unknownMembers(row, plan.known, "column");
-      const usedRow: Record<string, UsedCell> = {};
-      for (const column of plan.columns) {
-        values.column = column.symbol;
-        values.label = column.label;
-        values.used = null;
-        this.readCell(plan, column, row[column.symbol], r, given);
-        if (echo && values.used !== null) usedRow[column.symbol] = values.used;
-      }
-      if (echo) usedRows.push(usedRow);
-    }
-    values.row = -1;
-    values.column = "";
-    values.used = null;
-    if (echo) this.used[plan.symbol] = { rows: usedRows };
-  }
-
-  /** Lists of the right length for every column of a table. */
-  private makeRoom(plan: TablePlan, rows: number): void {
-    const { frame } = this;
-    for (const column of plan.columns) {
-      if (column.kind === "number") {
-        if (frame.columns[column.index]?.length !== rows)
-          frame.columns[column.index] = new Float64Array(rows);
-      } else if (column.kind === "choice") {
-        if (frame.choiceColumns[column.index]?.length !== rows)
-          frame.choiceColumns[column.index] = new Int32Array(rows);
-      } else if (column.kind === "material") {
-        frame.columnMaterials[column.index]!.length = rows;
-      }
-    }
-  }
-
-  private readCell(table: TablePlan, column: CellPlan, cell: unknown, r: number, given: boolean): void {
-    const { values, frame } = this;
-    if (column.kind === "text") return values.text(column.maxLength, cell);
-    let value = cell;
-    if (value === undefined && (!given || !this.options.refuseDefaults)) {
-      value = column.kind === "number" ? column.number.declaration.default : (column.default ?? undefined);
-      if (value !== undefined && given) this.defaulted.push(`${table.symbol}/${r}/${column.symbol}`);
-    }
-    if (value === undefined || value === null) {
-      values.missing(column.kind === "number" ? column.number.unit.symbol : undefined);
-      return;
-    }
-    switch (column.kind) {
-      case "number":
-        (frame.columns[column.index] ?? noNumbers)[r] = values.number(column.number, value);
-        break;
-      case "choice":
-        (frame.choiceColumns[column.index] ?? noPlaces)[r] = Math.max(0, values.choice(column, value));
-        break;
-      case "material": {
-        const reader = this.readerAt(frame.columnMaterials[column.index]!, r);
-        if (values.material(column, value, reader)) this.readers.push(reader);
-      }
-    }
+    if (name !== null && this.materials.read(plan, name, reader)) this.readers.push(reader);
   }
 
   /**
