@@ -1,7 +1,7 @@
 import "server-only";
 import { BlockList, isIP } from "node:net";
-import { and, eq, inArray, isNull, lt, or } from "drizzle-orm";
-import { reader } from "@/db/client";
+import { and, eq, isNull, lt, or, sql } from "drizzle-orm";
+import { prepared } from "@/db/prepared";
 import { write } from "@/db/tx";
 import { keys, people } from "@/db/schema/people";
 import { after, minute, now } from "@/lib/core/clock";
@@ -21,22 +21,48 @@ function refusal(detail: string): CodedError {
   return new CodedError("unauthenticated", detail, [], { challenge: invalidTokenChallenge });
 }
 
+const keyByLookup = prepared((db) =>
+  db
+    .select({
+      key: {
+        id: keys.id,
+        lookup: keys.lookup,
+        label: keys.label,
+        scopes: keys.scopes,
+        templates: keys.templates,
+        networks: keys.networks,
+        defaultsPolicy: keys.defaultsPolicy,
+        ratePerMinute: keys.ratePerMinute,
+        expiresAt: keys.expiresAt,
+        revokedAt: keys.revokedAt,
+        lastUsedAt: keys.lastUsedAt,
+      },
+      owner: { id: people.id, role: people.role, active: people.active },
+    })
+    .from(keys)
+    .innerJoin(people, eq(people.id, keys.ownerId))
+    .where(eq(keys.lookup, sql.placeholder("lookup")))
+    .limit(1)
+    .prepare(),
+);
+
+/** Under the present secret first; under a former one only while such are kept. */
+async function findKey(lookups: readonly string[]) {
+  for (const lookup of lookups) {
+    const [row] = await keyByLookup().all({ lookup });
+    if (row && equalInConstantTime(lookup, row.key.lookup)) return row;
+  }
+  return null;
+}
+
 /**
  * The actor behind a presented key. `address` is the caller's, or null when no proxy vouches for it. Garbage is refused
  * before any database read. Throws CodedError `unauthenticated` with the member `challenge`.
  */
 export async function verifyKey(text: string, address: string | null): Promise<KeyActor> {
   if (!isWellFormedKey(text)) throw refusal("This is not an API key of Coldface, or it was mistyped.");
-  const lookups = possibleLookups(text);
-  const [row] = await reader()
-    .select({ key: keys, owner: people })
-    .from(keys)
-    .innerJoin(people, eq(people.id, keys.ownerId))
-    .where(inArray(keys.lookup, lookups))
-    .limit(1);
-  if (!row || !lookups.some((lookup) => equalInConstantTime(lookup, row.key.lookup))) {
-    throw refusal("This key is not known here.");
-  }
+  const row = await findKey(possibleLookups(text));
+  if (!row) throw refusal("This key is not known here.");
   const { key, owner } = row;
   const at = now();
   if (key.revokedAt !== null) throw refusal("This key was revoked.");

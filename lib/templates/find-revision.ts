@@ -1,6 +1,7 @@
 import "server-only";
-import { and, desc, eq, inArray } from "drizzle-orm";
+import { and, desc, eq, inArray, sql } from "drizzle-orm";
 import { reader } from "@/db/client";
+import { prepared } from "@/db/prepared";
 import { templateRevisions, templates } from "@/db/schema/templates";
 import type { RevisionState } from "@/db/vocabulary";
 import { visibleStates } from "@/lib/access/actions";
@@ -36,18 +37,36 @@ const columns = {
   withdrawnReason: templateRevisions.withdrawnReason,
 };
 
+const issuedBySlug = prepared((db) =>
+  db
+    .select(columns)
+    .from(templateRevisions)
+    .innerJoin(templates, eq(templates.id, templateRevisions.templateId))
+    .where(and(eq(templates.slug, sql.placeholder("slug")), eq(templateRevisions.state, "issued")))
+    .prepare(),
+);
+
+const numberedBySlug = prepared((db) =>
+  db
+    .select(columns)
+    .from(templateRevisions)
+    .innerJoin(templates, eq(templates.id, templateRevisions.templateId))
+    .where(
+      and(
+        eq(templates.slug, sql.placeholder("slug")),
+        eq(templateRevisions.number, sql.placeholder("number")),
+      ),
+    )
+    .prepare(),
+);
+
 /** The issued revision of a template, or the numbered one whatever its state; null when there is none. */
 export async function findRevision(
   slug: string,
   number: number | undefined,
 ): Promise<RunnableRevision | null> {
-  const which =
-    number === undefined ? eq(templateRevisions.state, "issued") : eq(templateRevisions.number, number);
-  const [row] = await reader()
-    .select(columns)
-    .from(templateRevisions)
-    .innerJoin(templates, eq(templates.id, templateRevisions.templateId))
-    .where(and(eq(templates.slug, slug), which));
+  const [row] =
+    number === undefined ? await issuedBySlug().all({ slug }) : await numberedBySlug().all({ slug, number });
   return row ?? null;
 }
 
