@@ -8,64 +8,81 @@ import boundaries from "eslint-plugin-boundaries";
  */
 const engine = ["numeric", "units", "language", "calculation"];
 const nouns = ["people", "materials", "templates", "records"];
-const ground = ["core", "db", "vocabulary", "access", "audit", "outbox", "usage", "compute", ...engine];
+const ground = ["core", "db", "access", "audit", "outbox", "usage", "compute", ...engine];
 
+/** Rooms by folder; each file belongs to the first that holds it. */
 const rooms = {
-  tests: "tests/**/*",
-  vocabulary: "db/vocabulary.ts",
-  db: "db/**/*",
-  operation: "lib/http/operation.ts",
-  paths: "lib/core/paths.ts",
-  schemas: "lib/{people,materials,templates,records}/schemas.ts",
-  core: "lib/core/**/*",
-  numeric: "lib/numeric/**/*",
-  units: "lib/units/**/*",
-  language: "lib/language/**/*",
-  calculation: "lib/calculation/**/*",
-  compute: "lib/compute/**/*",
-  access: "lib/access/**/*",
-  audit: "lib/audit/**/*",
-  outbox: "lib/outbox/**/*",
-  usage: "lib/usage/**/*",
-  people: "lib/people/**/*",
-  materials: "lib/materials/**/*",
-  templates: "lib/templates/**/*",
-  records: "lib/records/**/*",
-  http: "lib/http/**/*",
-  sheet: "lib/sheet/**/*",
-  commands: "lib/commands/**/*",
-  openapi: "openapi/**/*",
-  app: ["app/**/*", "proxy.ts"],
-  start: ["instrumentation.ts", "instrumentation-node.ts"],
+  tests: "tests",
+  db: "db",
+  openapi: "openapi",
+  app: "app",
+  core: "lib/core",
+  numeric: "lib/numeric",
+  units: "lib/units",
+  language: "lib/language",
+  calculation: "lib/calculation",
+  compute: "lib/compute",
+  access: "lib/access",
+  audit: "lib/audit",
+  outbox: "lib/outbox",
+  usage: "lib/usage",
+  people: "lib/people",
+  materials: "lib/materials",
+  templates: "lib/templates",
+  records: "lib/records",
+  http: "lib/http",
+  sheet: "lib/sheet",
+  commands: "lib/commands",
 };
 
+/** Single files of a room that others may import without the rest of it. */
+const files = {
+  vocabulary: "db/vocabulary.ts",
+  operation: "lib/http/operation.ts",
+  schemas: "lib/{people,materials,templates,records}/schemas.ts",
+};
+
+/** Who may import whom: rooms, and after them single files of other rooms. */
 const may = {
-  core: ["core", "paths"],
-  paths: [],
-  numeric: ["numeric"],
-  units: ["units"],
-  language: ["language", "units", "numeric"],
-  calculation: ["calculation", "language", "units", "numeric", "core"],
-  compute: ["compute", "calculation", "core"],
-  vocabulary: [],
-  db: ["db", "vocabulary", "core"],
-  access: ["access", "core", "db", "vocabulary"],
-  audit: ["audit", "access", "core", "db", "vocabulary"],
-  outbox: ["outbox", "access", "core", "db", "vocabulary"],
-  usage: ["usage", "access", "core", "db", "vocabulary"],
-  schemas: ["schemas", "core", "units", "calculation", "vocabulary"],
-  people: ["people", "schemas", ...ground],
-  materials: ["materials", "schemas", "people", ...ground],
-  templates: ["templates", "schemas", "people", "materials", ...ground],
-  records: ["records", "schemas", "people", "materials", "templates", ...ground],
-  operation: ["core"],
-  http: ["http", "operation", "core", "paths", "access", "db", "vocabulary"],
-  sheet: ["sheet", "calculation", "language", "units"],
-  openapi: ["openapi", "schemas", "operation", "vocabulary", "core", "paths", "units", "calculation"],
-  app: ["app", "openapi", "operation", "http", "sheet", "schemas", "vocabulary", "access", "core", "paths", "units", "language", "calculation", "usage", ...nouns],
-  commands: Object.keys({ ...rooms }).filter((room) => room !== "tests"),
-  start: Object.keys({ ...rooms }).filter((room) => room !== "tests"),
-  tests: Object.keys({ ...rooms }),
+  core: [["core"], []],
+  numeric: [["numeric"], []],
+  units: [["units"], []],
+  language: [["language", "units", "numeric"], []],
+  calculation: [["calculation", "language", "units", "numeric", "core"], []],
+  compute: [["compute", "calculation", "core"], []],
+  db: [["db", "core"], []],
+  access: [["access", "core", "db"], []],
+  audit: [["audit", "access", "core", "db"], []],
+  outbox: [["outbox", "access", "core", "db"], []],
+  usage: [["usage", "access", "core", "db"], []],
+  people: [["people", ...ground], []],
+  materials: [["materials", "people", ...ground], []],
+  templates: [["templates", "people", "materials", ...ground], []],
+  records: [["records", "people", "materials", "templates", ...ground], []],
+  http: [["http", "core", "access", "db"], []],
+  sheet: [["sheet", "calculation", "language", "units"], []],
+  openapi: [
+    ["openapi", "core", "units", "calculation"],
+    ["schemas", "operation", "vocabulary"],
+  ],
+  app: [
+    [
+      "app",
+      "openapi",
+      "http",
+      "sheet",
+      "access",
+      "core",
+      "units",
+      "language",
+      "calculation",
+      "usage",
+      ...nouns,
+    ],
+    ["vocabulary"],
+  ],
+  commands: [Object.keys(rooms).filter((room) => room !== "tests" && room !== "app"), []],
+  tests: [Object.keys(rooms), []],
 };
 
 const config = [
@@ -76,7 +93,8 @@ const config = [
     plugins: { boundaries },
     settings: {
       "import/resolver": { typescript: { alwaysTryTypes: true } },
-      "boundaries/elements": Object.entries(rooms).map(([type, pattern]) => ({ type, pattern, partialMatch: false })),
+      "boundaries/elements": Object.entries(rooms).map(([type, pattern]) => ({ type, pattern })),
+      "boundaries/files": Object.entries(files).map(([category, pattern]) => ({ category, pattern })),
     },
     rules: {
       "boundaries/dependencies": [
@@ -84,21 +102,30 @@ const config = [
         {
           default: "disallow",
           policies: [
-            ...Object.entries(may).map(([type, allowed]) => ({
-              from: { element: { type } },
-              allow: { to: { element: { types: { anyOf: allowed } } } },
-            })),
+            ...Object.entries(may).flatMap(([type, [allowed, single]]) => [
+              { from: { element: { type } }, allow: { to: { element: { types: { anyOf: allowed } } } } },
+              ...single.map((category) => ({
+                from: { element: { type } },
+                allow: { to: { file: { categories: category } } },
+              })),
+            ]),
             { from: { element: { type: "*" } }, allow: { to: { module: { origin: ["external", "core"] } } } },
           ],
         },
       ],
       "@typescript-eslint/no-explicit-any": "error",
       "@typescript-eslint/consistent-type-imports": "error",
-      "@typescript-eslint/no-unused-vars": ["error", { argsIgnorePattern: "^_", varsIgnorePattern: "^_", caughtErrors: "all" }],
+      "@typescript-eslint/no-unused-vars": [
+        "error",
+        { argsIgnorePattern: "^_", varsIgnorePattern: "^_", caughtErrors: "all" },
+      ],
       eqeqeq: "error",
       "no-restricted-syntax": [
         "error",
-        { selector: "CallExpression[callee.name='parseInt'][arguments.length=1]", message: "Give the radix." },
+        {
+          selector: "CallExpression[callee.name='parseInt'][arguments.length=1]",
+          message: "Give the radix.",
+        },
       ],
     },
   },
