@@ -1,7 +1,7 @@
 import { formatExact, formatSignificant } from "@/lib/units";
 
 /** A number as it was typed or declared, with a real minus. */
-export function plainNumber(value: number): string {
+function plainNumber(value: number): string {
   return formatExact(value).replaceAll("-", "−");
 }
 

@@ -16,6 +16,7 @@ import {
   tableForm,
 } from "./property-forms";
 import { propertyQuantities } from "./property-quantity";
+import { runCost } from "./run-cost";
 
 /** A material's revision ready to be read in runs. Holds no state of a run and may be shared. */
 export interface CompiledMaterial {
@@ -30,9 +31,12 @@ export interface CompiledMaterial {
     readonly unit: Unit;
     readonly note: string;
   } | null;
-  /** One of its forms contains a special form: read it where it can be ended from outside. */
-  readonly iterates: boolean;
+  /** One of its workings iterates or is long: read it where it can be ended from outside. */
+  readonly heavy: boolean;
 }
+
+/** Steps of one reading up to which a working is as quick as the other forms. */
+const longestLightWorking = 1_000;
 
 function unitOf(text: string, quantityName: string, what: string): Unit {
   const quantity = quantityByName(quantityName);
@@ -46,7 +50,7 @@ function workingForm(
   property: PropertyName,
   declared: Property,
   material: Material,
-): { curve: FormCurve; iterates: boolean } {
+): { curve: FormCurve; heavy: boolean } {
   const { program, diagnostics } = checkPieceWorking(
     piece.working,
     property,
@@ -87,7 +91,7 @@ function workingForm(
     }
     return values[line] as number;
   });
-  return { curve, iterates: program.iterates };
+  return { curve, heavy: program.iterates || runCost(program).fixed > longestLightWorking };
 }
 
 function compilePiece(
@@ -95,28 +99,28 @@ function compilePiece(
   property: PropertyName,
   declared: Property,
   material: Material,
-): { piece: CompiledPiece; iterates: boolean } {
+): { piece: CompiledPiece; heavy: boolean } {
   const what = `${material.name}, ${propertyQuantities[property]}`;
   const argument = unitOf(declared.argumentUnit, "temperature", what);
   const unit = unitOf(declared.unit, propertyQuantities[property], what);
   const scale: FormScale = { factor: argument.factor, shift: argument.shift, scale: unit.factor };
-  const form = (): { curve: FormCurve; iterates: boolean } => {
+  const form = (): { curve: FormCurve; heavy: boolean } => {
     switch (piece.form) {
       case "constant":
-        return { curve: constantForm(piece.value * scale.scale), iterates: false };
+        return { curve: constantForm(piece.value * scale.scale), heavy: false };
       case "polynomial":
-        return { curve: polynomialForm(piece.coefficients, scale), iterates: false };
+        return { curve: polynomialForm(piece.coefficients, scale), heavy: false };
       case "log10-polynomial":
-        return { curve: logPolynomialForm(piece.coefficients, scale), iterates: false };
+        return { curve: logPolynomialForm(piece.coefficients, scale), heavy: false };
       case "log10-ratio":
-        return { curve: logRatioForm(piece.numerator, piece.denominator, scale), iterates: false };
+        return { curve: logRatioForm(piece.numerator, piece.denominator, scale), heavy: false };
       case "table":
-        return { curve: tableForm(piece.points, piece.interpolation, scale), iterates: false };
+        return { curve: tableForm(piece.points, piece.interpolation, scale), heavy: false };
       case "working":
         return workingForm(piece, property, declared, material);
     }
   };
-  const { curve, iterates } = form();
+  const { curve, heavy } = form();
   const rangeUnit = unitOf(piece.range.unit, "temperature", what);
   return {
     piece: {
@@ -126,7 +130,7 @@ function compilePiece(
       max: toSi(piece.range.max, rangeUnit, "absolute"),
       source: piece.source ?? declared.source,
     },
-    iterates,
+    heavy,
   };
 }
 
@@ -150,17 +154,17 @@ function serviceOf({ name, service }: Material): CompiledMaterial["service"] {
  */
 export function compileMaterial(material: Material, slug: string, revision: number): CompiledMaterial {
   const properties: Partial<Record<PropertyName, CompiledProperty>> = {};
-  let iterates = false;
+  let heavy = false;
   for (const name of propertyNames) {
     const declared = material.properties[name];
     if (!declared) continue;
     const pieces = declared.pieces.map((piece) => compilePiece(piece, name, declared, material));
-    iterates ||= pieces.some((piece) => piece.iterates);
+    heavy ||= pieces.some((piece) => piece.heavy);
     properties[name] = new CompiledProperty(
       name,
       pieces.map(({ piece }) => piece),
       declared,
     );
   }
-  return { slug, revision, name: material.name, properties, service: serviceOf(material), iterates };
+  return { slug, revision, name: material.name, properties, service: serviceOf(material), heavy };
 }

@@ -10,7 +10,7 @@ import { safetyNotices } from "./safety";
 
 /** The front of a run: prepare a definition once, evaluate it often. */
 export { materialsNeeded, materialsNeededForRows } from "./materials-needed";
-export type { MaterialSnapshot, MaterialSnapshots } from "./materials-needed";
+export type { MaterialSnapshots } from "./materials-needed";
 export { prepare } from "./prepare";
 export type { Prepared } from "./prepare";
 export { evaluateRows } from "./execute-rows";

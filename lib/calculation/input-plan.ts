@@ -6,7 +6,7 @@ import { propertyQuantities } from "./property-quantity";
 
 /** How each input of a definition is read into the frame of a run; made once for a definition. */
 
-export interface NumberPlan {
+interface NumberPlan {
   readonly kind: "number";
   readonly symbol: string;
   readonly label: string;
@@ -40,7 +40,7 @@ export interface MaterialPlan {
   readonly default: string | null;
 }
 
-export interface TextPlan {
+interface TextPlan {
   readonly kind: "text";
   readonly symbol: string;
   readonly label: string;

@@ -36,7 +36,7 @@ export interface Display {
   readonly digits: number;
 }
 
-export interface LinePlan {
+interface LinePlan {
   readonly symbol: string;
   readonly index: number;
   readonly isList: boolean;
@@ -47,7 +47,7 @@ export interface LinePlan {
   readonly line: number;
 }
 
-export interface ResultPlan {
+interface ResultPlan {
   readonly declaration: Result;
   readonly quantity: Quantity;
   /** Place in `Frame.values`. */
@@ -56,14 +56,14 @@ export interface ResultPlan {
   readonly display: Display;
 }
 
-export interface RequirePlan {
+interface RequirePlan {
   readonly declaration: Requirement;
   readonly condition: number;
   readonly inputs: readonly string[];
   readonly message: readonly MessagePart[];
 }
 
-export interface LimitPlan {
+interface LimitPlan {
   readonly declaration: Limit;
   readonly condition: number;
   readonly label: readonly MessagePart[];

@@ -6,8 +6,6 @@ import { programSource } from "./program-source";
 import { schemaDiagnostics } from "./schema-diagnostics";
 import { sizeDiagnostic } from "./size-limit";
 
-export { programSource };
-
 export interface DefinitionCheck {
   /** null when the shape is wrong. */
   readonly definition: Definition | null;

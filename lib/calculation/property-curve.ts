@@ -4,7 +4,7 @@ import { compileMaterial } from "./compiled-material";
 import type { Material } from "./material";
 import { propertyQuantities } from "./property-quantity";
 
-export interface PropertyPoint {
+interface PropertyPoint {
   /** In the property's `argumentUnit`. */
   readonly argument: number;
   /** In the property's `unit`. */

@@ -58,7 +58,7 @@ export function polynomialForm(
 }
 
 /** Mean of any smooth curve by adaptive quadrature. Throws `NumericFault` `not-converged`. */
-export function quadratureMean(value: (temperature: number) => number, from: number, to: number): number {
+function quadratureMean(value: (temperature: number) => number, from: number, to: number): number {
   if (Math.abs(to - from) <= shortInterval * Math.max(Math.abs(from), Math.abs(to))) {
     return (value(from) + 4 * value(from + (to - from) / 2) + value(to)) / 6;
   }

@@ -50,7 +50,7 @@ const structuralUse: Notice = {
 };
 
 /** Closes the list in every run. */
-export const governance: Notice = {
+const governance: Notice = {
   code: "local-codes",
   message:
     "Local codes and licensed practice govern. This is a calculation under the stated assumptions, not an approval.",

@@ -1,7 +1,7 @@
 import type { Diagnostic } from "@/lib/language";
 
 /** Largest definition or material, as JSON in bytes. */
-export const largestDefinition = 256 * 1024;
+const largestDefinition = 256 * 1024;
 
 /** A diagnostic when the value is larger than 256 kB as JSON or cannot be JSON at all, else null. */
 export function sizeDiagnostic(value: unknown): Diagnostic | null {

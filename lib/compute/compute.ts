@@ -49,8 +49,8 @@ function steps(prepared: Prepared, request: RunRequest | RowsRequest): number {
   return "rows" in request ? one * request.rows.length : one;
 }
 
-function iterating(materials: MaterialSnapshots): boolean {
-  return Object.values(materials).some(({ compiled }) => (compiled as CompiledMaterial).iterates);
+function heavy(materials: MaterialSnapshots): boolean {
+  return Object.values(materials).some(({ compiled }) => (compiled as CompiledMaterial).heavy);
 }
 
 function resultOf<Result>(answer: Answer<Result>): Result {
@@ -162,7 +162,7 @@ export class Compute {
     }
     if (prepared.program.iterates || steps(prepared, request) > mostStepsInProcess) return null;
     const compiled = this.programs.withCompiled(materials);
-    return iterating(compiled) ? null : { prepared, materials: compiled };
+    return heavy(compiled) ? null : { prepared, materials: compiled };
   }
 
   private sent(hash: string, definition: Definition, materials: MaterialSnapshots) {

@@ -12,15 +12,13 @@ const mostWaiting = 500;
 /** A task that has not begun by then is refused as busy. */
 const longestWait = 15_000;
 
-function root(): string {
-  return /* turbopackIgnore: true */ process.cwd();
-}
-
 /** Path of the bundle. While developing and in tests it is built when missing or stale. */
 async function workerFile(): Promise<string> {
-  const file = path.join(root(), "dist", "workers", "calc.mjs");
+  const file = path.join(/* turbopackIgnore: true */ process.cwd(), "dist", "workers", "calc.mjs");
   if (process.env.NODE_ENV !== "production") {
-    const builder = pathToFileURL(path.join(root(), "lib", "compute", "build-worker.mjs")).href;
+    const builder = pathToFileURL(
+      path.join(/* turbopackIgnore: true */ process.cwd(), "lib", "compute", "build-worker.mjs"),
+    ).href;
     const { buildWorker } = (await import(/* turbopackIgnore: true */ /* @vite-ignore */ builder)) as {
       buildWorker: () => Promise<string>;
     };

@@ -1,7 +1,9 @@
+import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import type { Definition } from "@/lib/calculation/definition";
 import type { GivenInputs } from "@/lib/calculation/evaluation";
 import { evaluate, materialsNeeded, materialsNeededForRows, prepare } from "@/lib/calculation/execute";
+import { CodedError } from "@/lib/core/errors";
 import {
   definitionOf,
   numberInput,
@@ -122,6 +124,54 @@ describe("bad input", () => {
       "#/inputs/constructor unknown-member",
       "#/inputs/__proto__ unknown-member",
     ]);
+  });
+});
+
+describe("any inputs at all", () => {
+  const templates = ["plane-wall", "furnace-lining", "thick-body-step", "pipe-surface-balance"].map(
+    preparedTemplate,
+  );
+
+  it("either run to finite results or are refused with problems that point into the request", () => {
+    const value = fc.oneof(
+      fc.double(),
+      fc.string(),
+      fc.constantFrom("convection", "fireclay-brick", "air", "", null, 0, -0, 1e308, 5e-324),
+      fc.record({
+        value: fc.double(),
+        unit: fc.constantFrom("mm", "°F", "ΔK", "W/(m·K)", "furlong", "1", ""),
+      }),
+      fc.jsonValue({ maxDepth: 3 }),
+    );
+    fc.assert(
+      fc.property(
+        fc.constantFrom(...templates),
+        fc.array(value, { maxLength: 6 }),
+        fc.nat(),
+        (prepared, values, shift) => {
+          const symbols = [...prepared.known, "zz"];
+          const inputs = Object.fromEntries(
+            values.map((one, i) => [symbols[(i + shift) % symbols.length]!, one]),
+          ) as GivenInputs;
+          let outcome;
+          try {
+            outcome = evaluate(prepared, { inputs }, suppliedMaterials);
+          } catch (error) {
+            expect(error).toBeInstanceOf(CodedError);
+            const { problems } = error as CodedError;
+            expect(problems.length).toBeGreaterThan(0);
+            for (const { pointer, message } of problems) {
+              expect(pointer).toMatch(/^#\/inputs/);
+              expect(message).not.toMatch(/undefined|NaN|\[object/);
+            }
+            return;
+          }
+          const numbers = Object.values(outcome.results).flatMap((one) => one.values ?? [one.value]);
+          expect(numbers.every((one) => Number.isFinite(one))).toBe(true);
+        },
+      ),
+      { numRuns: 400 },
+    );
   });
 });
 
