@@ -5,7 +5,7 @@ import { pageLimits } from "@/lib/core/paging";
 import { listMaterials } from "@/lib/materials/list-materials";
 import { getMaterial } from "@/lib/materials/get-material";
 import { formatSignificant } from "@/lib/units";
-import type { MaterialChoice } from "./_components/run-desk";
+import type { MaterialChoice } from "./_components/material-choice";
 
 /** Materials that the form offers, with range, service limit and source; none are read for a template without them. */
 export async function materialChoices(actor: Actor, definition: Definition): Promise<MaterialChoice[]> {

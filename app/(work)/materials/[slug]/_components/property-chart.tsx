@@ -12,7 +12,15 @@ import {
 } from "recharts";
 import { niceTicks } from "@/app/_components/plot/ticks";
 import { formatSignificant } from "@/lib/units";
-import type { PropertyPlotProps } from "./property-plot";
+
+interface PropertyPlotProps {
+  label: string;
+  /** Argument and value, in the property's own units. */
+  points: { argument: number; value: number }[];
+  unit: string;
+  argumentUnit: string;
+  relativeUncertainty: number | null;
+}
 
 const tickText = (value: number) => formatSignificant(value, 3).replace(/\.0+$/, "");
 const tickStyle = { fontSize: 12, fill: "var(--ink)", fontFamily: "var(--font-mono)" };

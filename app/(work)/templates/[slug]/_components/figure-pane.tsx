@@ -7,7 +7,7 @@ import type { Evaluation } from "@/lib/calculation/evaluation";
 import type { MaterialClass } from "@/lib/calculation/material";
 import { sectionModel } from "@/lib/sheet/section-model";
 import type { BuiltRequest } from "./build-request";
-import type { MaterialChoice } from "./run-desk";
+import type { MaterialChoice } from "./material-choice";
 
 const CurvePlot = dynamic(() => import("./curve-plot").then((module) => module.CurvePlot), {
   ssr: false,

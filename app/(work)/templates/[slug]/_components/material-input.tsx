@@ -6,7 +6,7 @@ import { SymbolText } from "@/app/_components/symbol";
 import type { MaterialInput as MaterialDeclaration } from "@/lib/calculation/definition";
 import { classHatch } from "@/lib/sheet/section-model";
 import type { MaterialState } from "./form-state";
-import type { MaterialChoice } from "./run-desk";
+import type { MaterialChoice } from "./material-choice";
 
 interface PickerProps {
   id: string;

@@ -3,13 +3,13 @@
 import { useForm, useWatch } from "react-hook-form";
 import { useMemo, useState } from "react";
 import type { Definition, Input } from "@/lib/calculation/definition";
-import type { MaterialClass } from "@/lib/calculation/material";
 import { makeApplies } from "./applies";
 import { buildRequest, fieldOfPointer } from "./build-request";
 import { ChoiceInput } from "./choice-input";
 import { CurvesPane, SectionPane } from "./figure-pane";
 import { initialValues, type FieldState, type FormValues } from "./form-state";
 import { LimitsPane } from "@/app/_components/run/limits-pane";
+import type { MaterialChoice } from "./material-choice";
 import { MaterialInput } from "./material-input";
 import { NumberInput } from "./number-input";
 import { PhoneBar } from "./phone-bar";
@@ -18,18 +18,6 @@ import { RunActions } from "./run-actions";
 import { TableInput } from "./table-input";
 import { useEvaluation } from "./use-evaluation";
 import { WorkingTable, type WorkingRow } from "@/app/_components/run/working-table";
-
-/** A material as the picker shows it. */
-export interface MaterialChoice {
-  slug: string;
-  name: string;
-  class: MaterialClass;
-  properties: string[];
-  /** Valid range of each property, as text. */
-  ranges: Record<string, string>;
-  service: string | null;
-  source: string;
-}
 
 export interface RunDeskProps {
   slug: string;

@@ -11,7 +11,7 @@ import { UnitSelect } from "@/app/_components/unit-select";
 import { convertText, unitsFor } from "./use-units";
 import { rowsFromClipboard } from "./paste-rows";
 import { PasteDialog } from "./paste-dialog";
-import type { MaterialChoice } from "./run-desk";
+import type { MaterialChoice } from "./material-choice";
 
 interface Props {
   input: TableDeclaration;
