@@ -8,10 +8,22 @@ export function normalisedText(text: string): string {
 
 const loneSurrogate = /[\uD800-\uDBFF](?![\uDC00-\uDFFF])|(?<![\uD800-\uDBFF])[\uDC00-\uDFFF]/;
 
-function quoted(text: string): string {
+function checkedText(text: string): string {
   const normal = normalisedText(text);
   if (loneSurrogate.test(normal)) throw new TypeError("A text holds half a surrogate pair.");
-  return JSON.stringify(normal);
+  return normal;
+}
+
+function objectText(value: object): string {
+  const members = new Map<string, unknown>();
+  for (const [name, member] of Object.entries(value)) {
+    if (member === undefined) continue;
+    const normal = checkedText(name);
+    if (members.has(normal)) throw new TypeError(`Two members are named ${JSON.stringify(normal)}.`);
+    members.set(normal, member);
+  }
+  const ordered = [...members].sort(([a], [b]) => (a < b ? -1 : a > b ? 1 : 0));
+  return `{${ordered.map(([name, member]) => `${JSON.stringify(name)}:${canonicalText(member)}`).join(",")}}`;
 }
 
 /**
@@ -24,12 +36,8 @@ export function canonicalText(value: unknown): string {
     if (!Number.isFinite(value)) throw new TypeError("JSON holds no NaN or infinity.");
     return JSON.stringify(value);
   }
-  if (typeof value === "string") return quoted(value);
-  if (Array.isArray(value)) return `[${value.map(canonicalText).join(",")}]`;
-  if (typeof value !== "object") throw new TypeError(`JSON holds no ${typeof value}.`);
-  const members = Object.entries(value)
-    .filter(([, member]) => member !== undefined)
-    .sort(([a], [b]) => (a < b ? -1 : a > b ? 1 : 0))
-    .map(([name, member]) => `${quoted(name)}:${canonicalText(member)}`);
-  return `{${members.join(",")}}`;
+  if (typeof value === "string") return JSON.stringify(checkedText(value));
+  if (Array.isArray(value)) return `[${value.map((item) => canonicalText(item)).join(",")}]`;
+  if (typeof value === "object") return objectText(value);
+  throw new TypeError(`JSON holds no ${typeof value}.`);
 }

@@ -17,11 +17,11 @@ describe("canonicalText", () => {
     );
   });
 
-  it("orders members by UTF-16 units as in RFC 8785, section 3.2.3", () => {
+  it("orders members by UTF-16 units after RFC 8785, section 3.2.3 (a surrogate pair comes before U+FF21)", () => {
     const value = {
       "\u20ac": "5",
       "\r": "1",
-      "\ufb33": "7",
+      "\uff21": "7",
       "1": "2",
       "\ud83d\ude00": "6",
       "\u0080": "3",
