@@ -9,9 +9,16 @@ const precedence = { "+": 1, "-": 1, "*": 2, "/": 2, "^": 4 } as const;
 /** A number of that type with its SI unit, for messages. */
 export function describeValue(type: Typed["type"], value: number): string {
   if (Number.isNaN(value)) return "not a number";
-  const number = Number.isFinite(value) ? formatSignificant(value, digits) : value > 0 ? "∞" : "−∞";
+  const number = Number.isFinite(value) ? shortNumber(value) : value > 0 ? "∞" : "−∞";
   const unit = type.is === "number" ? siUnitSymbol(type.dimension) : "1";
   return unit === "1" || unit === "" ? number : `${number} ${unit}`;
+}
+
+/** Six significant digits without zeros at the end: these are inputs and intermediate values, not results. */
+function shortNumber(value: number): string {
+  return formatSignificant(value, digits)
+    .replace(/(\.\d*?)0+(?=$|·)/, "$1")
+    .replace(/\.(?=$|·)/, "");
 }
 
 /** Text of an expression as the working would write it, cut when long. */

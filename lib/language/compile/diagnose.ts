@@ -8,12 +8,17 @@ type Form = Extract<Typed, { node: "balance" | "argmin" | "integral" | "series" 
 
 /** Sentences about a special form, with the units of its variable and of its expression. */
 export function formText(form: Form): FormText {
-  const bound = (form.node === "fixed-point" ? form.start : form.lower).type;
+  const bound = form.node === "fixed-point" ? form.start.type : boundType(form.lower.type, form.upper.type);
   return {
     name: form.node === "fixed-point" ? "fixed_point" : form.node,
     bound: (value) => describeValue(bound, value),
     result: (value) => describeValue(form.body.type, value),
   };
+}
+
+/** A literal 0 takes the dimension of the other end. */
+function boundType(lower: Typed["type"], upper: Typed["type"]): Typed["type"] {
+  return lower.is === "number" && lower.literalZero ? upper : lower;
 }
 
 /** "Line 4 (R_total)": where in the working, for the beginning of a sentence. */

@@ -1,5 +1,4 @@
 import type { Cost } from "./cost";
-import { elementOf, fillList, writeLoop } from "./emit-list";
 import type { FunctionWriter } from "./function-writer";
 import { Region } from "./region";
 import type { Operation, Value } from "./value";
@@ -36,19 +35,12 @@ export function emitForm(
       const start = writer.number(operandOf(value, 0), region);
       return solve(writer, value, operation, region, (body) => `X.fixedPointNumber(${body}, ${start})`);
     }
-    case "series": {
-      const sum = writer.module.name("s");
-      writeSeries(writer, value, operation, region, (body) => {
-        region.code.push(`let ${sum} = 0;`);
-        const term = writer.number(bodyOf(value), body);
-        body.code.push(`${sum} = ${sum} + ${term};`);
-      });
-      return writer.assign(region, "r", sum);
-    }
+    case "series":
+      return writeSeries(writer, value, operation, region);
   }
 }
 
-/** The same for a special form whose value is a list, written into a buffer. */
+/** The same for a fixed point of lists, written into a buffer. */
 export function emitListForm(
   writer: FunctionWriter,
   value: Value,
@@ -60,23 +52,12 @@ export function emitListForm(
   writer.faults++;
   const length = value.length;
   if (!length) throw new Error("A number has no list.");
-  if (operation.form === "fixed-point") {
-    const start = writer.list(operandOf(value, 0), region);
-    const room = writer.room(length);
-    const solver = (body: string): string =>
-      `X.fixedPointList(${body}, ${start}, ${writer.length(length)}, ${room}, ${into})`;
-    solve(writer, value, operation, region, solver, into);
-  } else if (operation.form === "series") {
-    writeLoop(writer, length, region, (loop) => loop.code.push(`${into}[${loop.index}] = 0;`));
-    writeSeries(writer, value, operation, region, (body) => {
-      writeLoop(writer, length, body, (loop) => {
-        const place = `${into}[${loop.index}]`;
-        loop.code.push(`${place} = ${place} + ${elementOf(writer, bodyOf(value), loop)};`);
-      });
-    });
-  } else {
-    throw new Error(`${operation.form} has a number for its value.`);
-  }
+  if (operation.form !== "fixed-point") throw new Error(`${operation.form} has a number for its value.`);
+  const start = writer.list(operandOf(value, 0), region);
+  const room = writer.room(length);
+  const solver = (body: string): string =>
+    `X.fixedPointList(${body}, ${start}, ${writer.length(length)}, ${room}, ${into})`;
+  solve(writer, value, operation, region, solver, into);
 }
 
 function operandOf(value: Value, index: number): Value {
@@ -156,13 +137,7 @@ function solve(
   return solution;
 }
 
-function writeSeries(
-  writer: FunctionWriter,
-  value: Value,
-  operation: FormOperation,
-  region: Region,
-  write: (body: Region) => void,
-): void {
+function writeSeries(writer: FunctionWriter, value: Value, operation: FormOperation, region: Region): string {
   const [from, to] = [0, 1].map((index) => {
     const end = operandOf(value, index);
     const register = writer.number(end, region);
@@ -174,11 +149,15 @@ function writeSeries(
   const variable = writer.module.name("x");
   body.registers.set(operation.bound.id, variable);
   body.code.push(charge(writer, operation));
-  write(body);
+  const term = writer.number(bodyOf(value), body);
   writer.flush(body);
+  const sum = writer.module.name("s");
   region.code.push(
+    `let ${sum} = 0;`,
     `for (let ${variable} = ${from}; ${variable} <= ${to}; ${variable} = ${variable} + 1) {`,
     ...body.code,
+    `${sum} = ${sum} + ${term};`,
     "}",
   );
+  return writer.assign(region, "r", sum);
 }

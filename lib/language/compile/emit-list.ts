@@ -9,13 +9,13 @@ import { lengthKey, type Value } from "./value";
 /** Functions that show the elements of another list in another order, without copying. */
 const views: ReadonlySet<string> = new Set(["drop_first", "drop_last", "reverse"]);
 
-function operandOf(value: Value, index: number): Value {
+export function operandOf(value: Value, index: number): Value {
   const operand = value.operands[index];
   if (!operand) throw new Error(`${value.operation.is} lacks operand ${index}.`);
   return operand;
 }
 
-function lengthOf(value: Value): ListLength {
+export function lengthOf(value: Value): ListLength {
   if (!value.length) throw new Error(`${value.operation.is} is not a list.`);
   return value.length;
 }
@@ -43,28 +43,65 @@ export function fillList(
   region: Region,
   length = lengthOf(value),
 ): void {
-  const operation = value.operation;
-  const found = region.find(value.id) !== undefined;
-  if (!found && operation.is === "select") {
+  const judged = value.operation.is === "judged";
+  const extended = judged ? operandOf(value, 0) : value;
+  if (region.find(extended.id) !== undefined) {
+    fillByElement(writer, value, into, region, length);
+  } else if (isCall(extended, "prepend") || isCall(extended, "append")) {
+    fillExtended(writer, extended, into, judged, region);
+  } else if (value.operation.is === "select") {
     fillSelected(writer, value, into, region, length);
-  } else if (!found && operation.is === "form") {
-    emitListForm(writer, value, operation, into, region);
-  } else if (!found && operation.is === "call" && operation.name === "prepend") {
-    // The list is written one place on, so the value may be computed first or last alike.
-    const first = writer.number(operandOf(value, 1), region);
-    copyShifted(writer, operandOf(value, 0), into, 1, region);
-    region.code.push(`${into}[0] = ${first};`);
-  } else if (!found && operation.is === "call" && operation.name === "append") {
-    const last = writer.number(operandOf(value, 1), region);
-    copyShifted(writer, operandOf(value, 0), into, 0, region);
-    region.code.push(`${into}[${writer.length(lengthOf(operandOf(value, 0)))}] = ${last};`);
+  } else if (value.operation.is === "form") {
+    emitListForm(writer, value, value.operation, into, region);
   } else {
-    writeLoop(writer, length, region, (loop) => {
-      const element =
-        value.length && !found ? computeElement(writer, value, loop) : elementOf(writer, value, loop);
-      loop.code.push(`${into}[${loop.index}] = ${element};`);
-    });
+    fillByElement(writer, value, into, region, length);
   }
+}
+
+function isCall(value: Value, name: string): boolean {
+  return value.operation.is === "call" && value.operation.name === name;
+}
+
+function fillByElement(
+  writer: FunctionWriter,
+  value: Value,
+  into: string,
+  region: Region,
+  length: ListLength,
+): void {
+  const compute = value.length && region.find(value.id) === undefined ? computeElement : elementOf;
+  writeLoop(writer, length, region, (loop) => {
+    loop.code.push(`${into}[${loop.index}] = ${compute(writer, value, loop)};`);
+  });
+}
+
+/** A list with one more element at its beginning or end, written without another copy. */
+function fillExtended(
+  writer: FunctionWriter,
+  value: Value,
+  into: string,
+  judged: boolean,
+  region: Region,
+): void {
+  const list = operandOf(value, 0);
+  const added = writer.number(operandOf(value, 1), region);
+  const first = isCall(value, "prepend");
+  writeLoop(writer, lengthOf(list), region, (loop) => {
+    const element = elementOf(writer, list, loop);
+    if (judged) judgeElement(writer, element, loop);
+    loop.code.push(`${into}[${loop.index}${first ? " + 1" : ""}] = ${element};`);
+  });
+  if (judged && operandOf(value, 1).operation.is !== "constant") writer.judge(added, region);
+  region.code.push(`${into}[${first ? "0" : writer.length(lengthOf(list))}] = ${added};`);
+}
+
+/** Adds the element to a sum in front of the loop, which is judged after it. */
+function judgeElement(writer: FunctionWriter, element: string, loop: Region): void {
+  const region = loop.ofNumbers;
+  const sum = writer.module.name("s");
+  region.code.push(`let ${sum} = 0;`);
+  loop.code.push(`${sum} = ${sum} + ${element};`);
+  writer.judge(sum, region);
 }
 
 function fillSelected(
@@ -83,13 +120,6 @@ function fillSelected(
   });
   const [yes = [], no = []] = sides;
   region.code.push(`if (${condition}) {`, ...yes, "} else {", ...no, "}");
-}
-
-function copyShifted(writer: FunctionWriter, list: Value, into: string, shift: number, region: Region): void {
-  writeLoop(writer, lengthOf(list), region, (loop) => {
-    const place = shift === 0 ? loop.index : `${loop.index} + ${shift}`;
-    loop.code.push(`${into}[${place}] = ${elementOf(writer, list, loop)};`);
-  });
 }
 
 /** Writes a loop over the places of a list; `body` fills it. */
@@ -112,7 +142,7 @@ export function elementOf(writer: FunctionWriter, value: Value, loop: Region): s
   if (!value.length) return writer.number(value, region);
   const register = loop.registers.get(value.id);
   if (register !== undefined) return register;
-  checkLength(writer, value.length, loop);
+  requireSameLength(value.length, loop.length);
   const buffer = region.find(value.id);
   if (buffer !== undefined) return remember(writer, value, `${buffer}[${loop.index}]`, loop);
   const operation = value.operation;
@@ -170,10 +200,7 @@ function computeElement(writer: FunctionWriter, value: Value, loop: Region): str
     }
     case "judged": {
       const element = elementOf(writer, operandOf(value, 0), loop);
-      const sum = writer.module.name("s");
-      region.code.push(`let ${sum} = 0;`);
-      loop.code.push(`${sum} = ${sum} + ${element};`);
-      writer.judge(sum, region);
+      judgeElement(writer, element, loop);
       loop.registers.set(value.id, element);
       return element;
     }
@@ -228,110 +255,17 @@ function computeListElement(writer: FunctionWriter, value: Value, name: string, 
   }
 }
 
-function interpolation(writer: FunctionWriter, value: Value, x: string, region: Region): string {
+/** The checker refuses lists of different length; here one would read beyond its end. */
+function requireSameLength(one: ListLength, other: ListLength | null): void {
+  if (!other || lengthKey(one) !== lengthKey(other)) {
+    throw new Error("Lists of different length reached the compiler.");
+  }
+}
+
+/** Expression of `interpolate` at one place; its points are buffers. */
+export function interpolation(writer: FunctionWriter, value: Value, x: string, region: Region): string {
   const [xs, ys] = [operandOf(value, 1), operandOf(value, 2)];
   const n = writer.length(lengthOf(xs));
-  if (lengthKey(lengthOf(xs)) !== lengthKey(lengthOf(ys))) {
-    region.code.push(`sameLength(${n}, ${writer.length(lengthOf(ys))});`);
-  }
+  requireSameLength(lengthOf(xs), ys.length);
   return `interpolateLinear(${x}, ${writer.list(xs, region)}, ${writer.list(ys, region)}, ${n})`;
-}
-
-/** Lists of one loop must have its length; lengths that differ in form are compared in the run. */
-function checkLength(writer: FunctionWriter, length: ListLength, loop: Region): void {
-  if (!loop.length || lengthKey(length) === lengthKey(loop.length)) return;
-  writer.faults++;
-  loop.ofNumbers.code.push(`sameLength(${writer.length(loop.length)}, ${writer.length(length)});`);
-}
-
-/** Code for a number made of a list: writes the loop and answers a register. */
-export function emitReduction(writer: FunctionWriter, value: Value, region: Region): string {
-  const operation = value.operation;
-  if (operation.is !== "call") throw new Error(`${operation.is} does not reduce a list.`);
-  const list = operandOf(value, 0);
-  const fold = (start: string, step: (sum: string, element: string) => string): string => {
-    const sum = writer.module.name("s");
-    region.code.push(`let ${sum} = ${start};`);
-    writeLoop(writer, lengthOf(list), region, (loop) => {
-      loop.code.push(`${sum} = ${step(sum, elementOf(writer, list, loop))};`);
-    });
-    return sum;
-  };
-  switch (operation.name) {
-    case "sum":
-      return writer.assign(
-        region,
-        "r",
-        fold("0", (sum, element) => `${sum} + ${element}`),
-      );
-    case "product":
-      return writer.assign(
-        region,
-        "r",
-        fold("1", (sum, element) => `${sum} * ${element}`),
-      );
-    case "min":
-      return writer.assign(
-        region,
-        "r",
-        fold("(1 / 0)", (sum, element) => `Math.min(${sum}, ${element})`),
-      );
-    case "max":
-      return writer.assign(
-        region,
-        "r",
-        fold("(-1 / 0)", (sum, element) => `Math.max(${sum}, ${element})`),
-      );
-    case "mean": {
-      const sum = fold("0", (so, element) => `${so} + ${element}`);
-      return writer.assign(region, "r", `${sum} / ${writer.length(lengthOf(list))}`);
-    }
-    default:
-      return pick(writer, value, operation.name, region);
-  }
-}
-
-function pick(writer: FunctionWriter, value: Value, name: string, region: Region): string {
-  const list = operandOf(value, 0);
-  switch (name) {
-    case "count": {
-      if (!list.still) writer.list(list, region);
-      return writer.assign(region, "r", writer.length(lengthOf(list)));
-    }
-    case "first":
-    case "last": {
-      writer.faults++;
-      const buffer = writer.list(list, region);
-      const n = writer.length(lengthOf(list));
-      region.code.push(`requireElements(${n});`);
-      return writer.assign(region, "r", `${buffer}[${name === "first" ? "0" : `${n} - 1`}]`);
-    }
-    case "at": {
-      writer.faults++;
-      const buffer = writer.list(list, region);
-      const place = writer.number(operandOf(value, 1), region);
-      return writer.assign(region, "r", `elementAt(${buffer}, ${writer.length(lengthOf(list))}, ${place})`);
-    }
-    case "interpolate": {
-      writer.faults++;
-      const x = writer.number(list, region);
-      return writer.assign(region, "r", interpolation(writer, value, x, region));
-    }
-    case "weighted_mean":
-      return weightedMean(writer, value, region);
-    default:
-      throw new Error(`The function ${name} has no code.`);
-  }
-}
-
-function weightedMean(writer: FunctionWriter, value: Value, region: Region): string {
-  const [xs, weights] = [operandOf(value, 0), operandOf(value, 1)];
-  const [sum, weight] = [writer.module.name("s"), writer.module.name("s")];
-  region.code.push(`let ${sum} = 0;`, `let ${weight} = 0;`);
-  writeLoop(writer, lengthOf(xs), region, (loop) => {
-    const w = elementOf(writer, weights, loop);
-    const x = elementOf(writer, xs, loop);
-    loop.code.push(`${sum} = ${sum} + ${x} * ${w};`, `${weight} = ${weight} + ${w};`);
-  });
-  return writer.assign(region, "r", `${sum} / ${weight}`);
 }

@@ -1,6 +1,6 @@
 import { isScalarFunction, mathNames } from "../runtime/scalar";
 import { emitForm } from "./emit-form";
-import { emitReduction } from "./emit-list";
+import { emitReduction } from "./emit-reduction";
 import type { FunctionWriter } from "./function-writer";
 import { numberLiteral } from "./module-writer";
 import { Region } from "./region";
@@ -16,7 +16,7 @@ export function emitNumber(writer: FunctionWriter, value: Value, from: Region): 
   const here = from.ofNumbers;
   const found = here.find(value.id);
   if (found !== undefined) return found;
-  const region = value.still ? here.outermost(value.free) : here;
+  const region = value.still ? here.outermost(value.free, value.light && value.uses > 1) : here;
   const register = compute(writer, value, region);
   region.registers.set(value.id, register);
   return register;
@@ -152,6 +152,10 @@ function chain(writer: FunctionWriter, base: string, n: number, region: Region):
 function select(writer: FunctionWriter, value: Value, region: Region): string {
   const condition = writer.condition(operandOf(value, 0), region);
   const isCondition = isConditionValue(operandOf(value, 1));
+  // What both sides compute in any case is computed once, in front.
+  const [always, alsoAlways] = [evaluated(operandOf(value, 1)), evaluated(operandOf(value, 2))];
+  const common = [...always].filter((each) => alsoAlways.has(each) && !each.length);
+  for (const each of common.sort((a, b) => a.id - b.id)) writer.number(each, region);
   const sides = [operandOf(value, 1), operandOf(value, 2)].map((side) => {
     const branch = Region.branch(region);
     const result = isCondition ? writer.condition(side, branch) : writer.number(side, branch);
@@ -174,6 +178,23 @@ function select(writer: FunctionWriter, value: Value, region: Region): string {
     "}",
   );
   return name;
+}
+
+const mostEvaluated = 300;
+
+/** The numbers and lists, short of `mostEvaluated`, that are computed whenever the value is. */
+function evaluated(value: Value, into = new Set<Value>()): Set<Value> {
+  if (into.has(value) || into.size >= mostEvaluated) return into;
+  const { is } = value.operation;
+  if (is !== "constant" && !isConditionValue(value)) into.add(value);
+  const sure =
+    is === "select" || is === "logic"
+      ? value.operands.slice(0, 1)
+      : is === "form"
+        ? value.operands.slice(0, -1)
+        : value.operands;
+  for (const operand of sure) evaluated(operand, into);
+  return into;
 }
 
 function isConditionValue(value: Value): boolean {

@@ -99,11 +99,11 @@ export class FunctionWriter {
   }
 
   lineNumber(index: number): string {
-    return this.load("r", `F.values[${index}]`);
+    return this.load("r", `V[${index}]`);
   }
 
   lineList(index: number): string {
-    return this.load("b", `F.values[${index}]`);
+    return this.load("b", `V[${index}]`);
   }
 
   column(index: number): string {

@@ -1,5 +1,5 @@
 import { isStructural } from "../runtime/list-functions";
-import { lengthKey, type FormName, type Operation, type Value } from "./value";
+import { lengthKey, type Operation, type Value } from "./value";
 import type { ListLength, Typed, TypedProgram } from "../types";
 
 type Form = Extract<Typed, { node: "balance" | "argmin" | "integral" | "series" | "fixed-point" }>;
@@ -25,6 +25,44 @@ const stillOperations: ReadonlySet<Operation["is"]> = new Set<Operation["is"]>([
 /** List functions that refuse some lists, so that they may not be computed early. */
 const refusing: ReadonlySet<string> = new Set(["at", "first", "last", "interpolate"]);
 
+/** Text that is equal for equal operations; `SameValue` for numbers, so that 0 and −0 differ. */
+function payload(operation: Operation): string {
+  const { is } = operation;
+  switch (is) {
+    case "constant":
+      return Object.is(operation.value, -0) ? "constant -0" : `constant ${operation.value}`;
+    case "input":
+    case "column":
+    case "line":
+      return `${is} ${operation.index}`;
+    case "bound":
+      return `bound ${operation.depth}`;
+    case "option-field":
+      return `field ${operation.choice} ${operation.values.join(" ")}`;
+    case "column-option-field":
+      return `column field ${operation.choiceColumn} ${operation.values.join(" ")}`;
+    case "option-test":
+      return `option ${operation.choice} ${operation.option} ${operation.equal}`;
+    case "arithmetic":
+    case "logic":
+      return operation.operator;
+    case "comparison":
+      return `${operation.operator}${operation.tolerant ? " tolerant" : ""}`;
+    case "call":
+      return `call ${operation.name}`;
+    case "property":
+      return `${operation.material.from} ${operation.material.index} ${operation.property} ${operation.operation}`;
+    case "form":
+      return `form ${operation.form} ${operation.bound.id}`;
+    case "negate":
+    case "not":
+    case "select":
+    case "judged":
+    case "after":
+      return is;
+  }
+}
+
 /**
  * Turns typed trees into values (value numbering). Functions of the working are expanded in place and remembered by
  * their arguments; sums and products do not depend on the order of their two operands, bit for bit.
@@ -43,33 +81,43 @@ export class Graph {
   ) {}
 
   value(operation: Operation, operands: readonly Value[], length: ListLength | null, bound?: Value): Value {
-    const payload =
-      operation.is === "form"
-        ? `form ${operation.form} ${operation.bound.id}`
-        : Object.is(operation.is === "constant" ? operation.value : 0, -0)
-          ? "minus zero"
-          : JSON.stringify(operation, (_, part: unknown) =>
-              typeof part === "number" && !Number.isFinite(part) ? String(part) : part,
-            );
-    let order = operands.map((operand) => operand.id);
-    if (operation.is === "arithmetic" && (operation.operator === "+" || operation.operator === "*")) {
-      order = order.toSorted((a, b) => a - b);
+    const commutes =
+      operation.is === "arithmetic" && (operation.operator === "+" || operation.operator === "*");
+    let key = payload(operation);
+    const [a, b] = operands;
+    if (commutes && a && b) {
+      key += a.id < b.id ? ` ${a.id} ${b.id}` : ` ${b.id} ${a.id}`;
+    } else {
+      for (const operand of operands) key += ` ${operand.id}`;
     }
-    const key = `${payload} ${order.join(" ")} ${length ? lengthKey(length) : ""}`;
+    if (length) key += ` ${lengthKey(length)}`;
     const found = this.known.get(key);
     if (found) return found;
     let free = operation.is === "bound" ? 1 << operation.depth : 0;
     let still =
       stillOperations.has(operation.is) || (operation.is === "call" && !refusing.has(operation.name));
+    const isPower = operation.is === "arithmetic" && operation.operator === "^";
+    let light = stillOperations.has(operation.is) && !isPower && !length;
     let reads = operation.is === "property";
     for (const operand of operands) {
       free |= operand.free;
       still &&= operand.still;
+      light &&= operand.light;
       reads ||= operand.reads;
       operand.uses++;
     }
     if (bound) free &= ~bound.free;
-    const made: Value = { id: this.known.size, operation, operands, length, free, still, reads, uses: 0 };
+    const made: Value = {
+      id: this.known.size,
+      operation,
+      operands,
+      length,
+      free,
+      still,
+      light,
+      reads,
+      uses: 0,
+    };
     this.known.set(key, made);
     return made;
   }

@@ -19,8 +19,9 @@ const members = [
 const results = ["run", "begin", "fuel", "at", "holds", "compared"];
 
 const register = /^[a-zA-Z][0-9]+$/;
+/** Text, number, word, sign, or what is none of them. */
 const token =
-  /"(?<text>[^"\\\n]*)"|(?<number>(?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?)|(?<word>[A-Za-z_$][\w$]*)|(?<sign>[-+*/%=<>!&|?:;,.(){}[\]])|\s+|(?<other>[^])/g;
+  /"([^"\\\n]*)"|(\d+\.?\d*(?:e[+-]?\d+)?)|([A-Za-z_$][\w$]*)|([-+*/%=<>!&|?:;,.(){}[\]])|\s+|([^])/g;
 
 /** What generated code may name beside its own words. */
 export interface Permitted {
@@ -38,20 +39,17 @@ export function assertGenerated(code: string, permitted: Permitted): void {
   const allowedMembers = new Set([...members, ...permitted.methods]);
   const allowedTexts = new Set(["use strict", ...permitted.texts]);
   let afterDot = false;
-  for (const { groups = {}, index } of code.matchAll(token)) {
-    const { text, word, other } = groups;
+  for (const match of code.matchAll(token)) {
+    const [whole, text, number, word, sign, other] = match;
     const refused =
       other !== undefined ||
       (text !== undefined && !allowedTexts.has(text)) ||
       (word !== undefined &&
         !(afterDot ? allowedMembers.has(word) : register.test(word) || allowedWords.has(word)));
     if (refused) {
-      throw new Error(
-        `Generated code holds ${other ?? word ?? `"${text}"`} at ${index}, which is not on the list.`,
-      );
+      throw new Error(`Generated code holds ${whole} at ${match.index}, which is not on the list.`);
     }
-    if (groups.sign === ".") afterDot = true;
-    else if (groups.number !== undefined || word !== undefined || text !== undefined || groups.sign)
-      afterDot = false;
+    if (sign === ".") afterDot = true;
+    else if ((number ?? word ?? text ?? sign) !== undefined) afterDot = false;
   }
 }

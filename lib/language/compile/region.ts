@@ -44,18 +44,17 @@ export class Region {
 
   /** Register of a value computed here or outside of here. */
   find(id: number): string | undefined {
-    for (let region: Region | null = this; region; region = region.parent) {
-      const register = region.registers.get(id);
-      if (register !== undefined) return register;
-    }
-    return undefined;
+    return this.registers.get(id) ?? this.parent?.find(id);
   }
 
-  /** Outermost region in which a value that reads the variables `free` can be computed on the way here. */
-  outermost(free: number): Region {
-    let region: Region = this;
-    while (region.kind === "body" && region.parent && (free & region.variable) === 0) region = region.parent;
-    return region;
+  /**
+   * Outermost region in which a value that reads the variables `free` can be computed on the way here.
+   * @param evenUntaken whether it may be computed although the branch that needs it is not taken
+   */
+  outermost(free: number, evenUntaken = false): Region {
+    const passes =
+      (this.kind === "body" && (free & this.variable) === 0) || (this.kind === "branch" && evenUntaken);
+    return passes && this.parent ? this.parent.outermost(free, evenUntaken) : this;
   }
 
   /** The region in which numbers are computed: in front of a loop. */

@@ -60,6 +60,8 @@ export interface Value {
   readonly free: number;
   /** Can be computed early without a fault: it neither stops the run nor is judged. */
   readonly still: boolean;
+  /** Sums and products of inputs and variables: cheaper to compute in front of a conditional than twice. */
+  readonly light: boolean;
   /** Reads a property, so that it must be evaluated once more, judged, when a solver has finished. */
   readonly reads: boolean;
   /** Places that use it. */

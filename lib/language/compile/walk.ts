@@ -207,9 +207,9 @@ export class Walk {
     const upper = asNumber(this.value(typed.upper));
     if (typed.node === "integral") return solveIntegral(this.text(typed), number, lower, upper);
     if (typed.node === "series") {
-      let sum: WalkValue = this.widened(typed, 0);
+      let sum = 0;
       const last = wholeBound(upper);
-      for (let n = wholeBound(lower); n <= last; n++) sum = spread(arithmetic["+"], [sum, body(n)]);
+      for (let n = wholeBound(lower); n <= last; n++) sum += asNumber(body(n));
       return sum;
     }
     const solver = typed.node === "balance" ? solveBalance : solveArgmin;

@@ -14,13 +14,13 @@ export interface WrittenProgram {
 
 /** Generates the module of a program: `run`, the conditions, and the state that a run reports. */
 export function writeProgram(program: TypedProgram): WrittenProgram {
-  const module = new ModuleWriter(program);
+  const shared = new ModuleWriter(program);
   const functions: string[] = [];
   const run =
     program.size > splitAbove
-      ? writeLinesApart(module, functions)
-      : writeFunction(module, (writer) => {
-          const graph = new Graph(program, module.sites, (_, index) => values[index]!);
+      ? writeLinesApart(shared, functions)
+      : writeFunction(shared, (writer) => {
+          const graph = new Graph(program, shared.sites, (_, index) => values[index]!);
           const values: Value[] = [];
           for (const index of program.lines.keys()) values.push(writeLine(writer, graph, index));
           writer.flush(writer.top);
@@ -36,9 +36,9 @@ export function writeProgram(program: TypedProgram): WrittenProgram {
         : `[${[sides.value, sides.bound]
             .map((side) =>
               writeFunction(
-                module,
+                shared,
                 (writer) => {
-                  const value = alone(module).build(side);
+                  const value = alone(shared).build(side);
                   return writer.number(value, writer.top);
                 },
                 place,
@@ -47,8 +47,8 @@ export function writeProgram(program: TypedProgram): WrittenProgram {
             .join(", ")}]`,
     );
     return writeFunction(
-      module,
-      (writer) => writer.condition(alone(module).build(condition.expression), writer.top),
+      shared,
+      (writer) => writer.condition(alone(shared).build(condition.expression), writer.top),
       place,
     );
   });
@@ -59,7 +59,7 @@ export function writeProgram(program: TypedProgram): WrittenProgram {
     "let U = 0;",
     "let A = 0;",
     "function N(F, A) { if (J) X.notFinite(F, A, A); Z = true; return false; }",
-    ...module.declarations,
+    ...shared.declarations,
     ...functions,
     `const run = ${run};`,
     `const holds = [${conditions.join(",\n")}];`,
@@ -71,12 +71,12 @@ export function writeProgram(program: TypedProgram): WrittenProgram {
     "at: () => A,",
     "};",
   ].join("\n");
-  return { code, sites: module.sites };
+  return { code, sites: shared.sites };
 }
 
 /** Graph whose lines are finished ones, read from the frame. */
-function alone(module: ModuleWriter): Graph {
-  const { program, sites } = module;
+function alone(shared: ModuleWriter): Graph {
+  const { program, sites } = shared;
   return new Graph(program, sites, (graph, index) =>
     graph.value({ is: "line", index }, [], program.lines[index]?.type.length ?? null),
   );
@@ -84,23 +84,23 @@ function alone(module: ModuleWriter): Graph {
 
 /** Text of a function of the frame; `write` answers what it returns. */
 function writeFunction(
-  module: ModuleWriter,
+  shared: ModuleWriter,
   write: (writer: FunctionWriter) => string | null,
   place = 0,
 ): string {
-  const writer = new FunctionWriter(module, place);
+  const writer = new FunctionWriter(shared, place);
   const result = write(writer);
   const name = result === null ? null : writer.module.name("r");
   if (name !== null) writer.top.code.push(`const ${name} = ${result};`);
   writer.flush(writer.top);
-  return `(F) => {\n${writer.text()}${name === null ? "" : `\nreturn ${name};`}\n}`;
+  return `(F) => {\nconst V = F.values;\n${writer.text()}${name === null ? "" : `\nreturn ${name};`}\n}`;
 }
 
-function writeLinesApart(module: ModuleWriter, functions: string[]): string {
-  const names = [...module.program.lines.keys()].map((index) => {
-    const name = module.name("l");
-    const text = writeFunction(module, (writer) => {
-      writeLine(writer, alone(module), index);
+function writeLinesApart(shared: ModuleWriter, functions: string[]): string {
+  const names = [...shared.program.lines.keys()].map((index) => {
+    const name = shared.name("l");
+    const text = writeFunction(shared, (writer) => {
+      writeLine(writer, alone(shared), index);
       return null;
     });
     functions.push(`const ${name} = ${text};`);
@@ -121,7 +121,7 @@ function writeLine(writer: FunctionWriter, graph: Graph, index: number): Value {
   const [forms, faults] = [writer.forms, writer.faults];
   const value = graph.judge(graph.build(line.expression));
   if (line.type.length) writeList(writer, value, index, line.type.length);
-  else top.code.push(`F.values[${index}] = ${writer.number(value, top)};`);
+  else top.code.push(`V[${index}] = ${writer.number(value, top)};`);
   const before: string[] = [];
   if (writer.forms > forms) {
     const own = top.judged.filter((register) => !pending.includes(register));
@@ -141,7 +141,9 @@ function writeLine(writer: FunctionWriter, graph: Graph, index: number): Value {
 function writeList(writer: FunctionWriter, value: Value, index: number, length: ListLength): void {
   const { top } = writer;
   if (length.plus < 0) writer.faults++;
-  const room = writer.assign(top, "b", `room(F.values, ${index}, ${writer.length(length)})`);
+  const n = writer.length(length);
+  const fits = `V[${index}].length === ${n}`;
+  const room = writer.assign(top, "b", `${fits} ? V[${index}] : room(V, ${index}, ${n})`);
   writer.fill(value, room, length);
   if (value.length) top.registers.set(value.id, room);
 }

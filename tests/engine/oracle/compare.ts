@@ -1,9 +1,10 @@
 import { checkProgram, parseWorking } from "@/lib/language";
 import { compileProgram } from "@/lib/language/compile";
 import { RunFault, type Frame, type Statement, type TypedProgram } from "@/lib/language/types";
-import { Interpreter, OracleFault, type Inputs, type Material, type Option, type Value } from "./interpreter";
+import { Interpreter, type Inputs, type Material, type Option, type Value } from "./interpreter";
 import { optionIndex, randomInputs, randomProgram, readerOf } from "./random-program";
-import { Random } from "./random-expression";
+import { Random } from "./random";
+import { OracleFault } from "./vocabulary";
 
 type Outcome = { readonly values: ReadonlyMap<string, Value> } | { readonly fault: string };
 

@@ -24,7 +24,7 @@ export function bisect(f: (x: number) => number, lower: number, upper: number): 
 
 /** Smallest value on a dense scan, refined by golden section between the neighbours of the best point. */
 export function scanMinimum(f: (x: number) => number, lower: number, upper: number): number {
-  const points = 120;
+  const points = 60;
   let best = lower;
   let least = f(lower);
   for (let i = 1; i <= points; i++) {
@@ -35,7 +35,7 @@ export function scanMinimum(f: (x: number) => number, lower: number, upper: numb
   const step = (upper - lower) / points;
   let [a, b] = [Math.max(lower, best - step), Math.min(upper, best + step)];
   const golden = (Math.sqrt(5) - 1) / 2;
-  for (let i = 0; i < 60; i++) {
+  for (let i = 0; i < 45; i++) {
     const [c, d] = [b - golden * (b - a), a + golden * (b - a)];
     if (f(c) <= f(d)) b = d;
     else a = c;
@@ -44,12 +44,20 @@ export function scanMinimum(f: (x: number) => number, lower: number, upper: numb
   return f(middle) < least ? middle : best;
 }
 
-/** Composite Simpson rule. */
-export function simpson(f: (x: number) => number, lower: number, upper: number, panels = 600): number {
-  const h = (upper - lower) / panels;
-  let sum = f(lower) + f(upper);
-  for (let i = 1; i < panels; i++) sum += (i % 2 === 1 ? 4 : 2) * f(lower + i * h);
-  return (sum * h) / 3;
+/** Romberg's scheme on trapezoids of up to 128 panels, for smooth integrands. */
+export function romberg(f: (x: number) => number, lower: number, upper: number, levels = 7): number {
+  let row = [((f(lower) + f(upper)) * (upper - lower)) / 2];
+  for (let level = 1; level <= levels; level++) {
+    const h = (upper - lower) / 2 ** level;
+    let middle = 0;
+    for (let i = 1; i < 2 ** level; i += 2) middle += f(lower + i * h);
+    const next = [row[0]! / 2 + h * middle];
+    for (let k = 1; k <= level; k++) {
+      next.push(next[k - 1]! + (next[k - 1]! - row[k - 1]!) / (4 ** k - 1));
+    }
+    row = next;
+  }
+  return row.at(-1)!;
 }
 
 function trapezoid(f: (x: number) => number, lower: number, upper: number, panels: number): number {
@@ -78,16 +86,11 @@ export const besselK = (n: number, x: number): number => besselKScaled(n, x) * M
 
 /** Schläfli's integral; only for x of ordinary size. */
 export function besselY(n: number, x: number): number {
-  const first = simpson((t) => Math.sin(x * Math.sin(t) - n * t), 0, Math.PI, 4000);
+  const first = romberg((t) => Math.sin(x * Math.sin(t) - n * t), 0, Math.PI, 12);
   const sign = n % 2 === 0 ? 1 : -1;
-  const end = Math.asinh(800 / x);
-  const second = simpson(
-    (t) => (Math.exp(n * t) + sign * Math.exp(-n * t)) * Math.exp(-x * Math.sinh(t)),
-    0,
-    end,
-    20_000,
-  );
-  return (first - second) / Math.PI;
+  const tail = (t: number): number =>
+    (Math.exp(n * t) + sign * Math.exp(-n * t)) * Math.exp(-x * Math.sinh(t));
+  return (first - romberg(tail, 0, Math.asinh(800 / x), 14)) / Math.PI;
 }
 
 /** The m-th sign change of J_n on a fine walk, by bisection. */

@@ -1,14 +1,8 @@
 import type { InputDeclaration, PropertyReader } from "@/lib/language/types";
 import type { Inputs, Material, Option } from "./interpreter";
-import { simpson } from "./numerics";
-import {
-  Random,
-  RandomExpressions,
-  type Kind,
-  type Named,
-  type RandomFunction,
-  type Surroundings,
-} from "./random-expression";
+import { romberg } from "./numerics";
+import { Random, type Kind } from "./random";
+import { RandomExpressions, type Named, type RandomFunction, type Surroundings } from "./random-expression";
 
 /** A random program with inputs for several runs. */
 export interface RandomProgram {
@@ -178,7 +172,7 @@ function randomMaterial(random: Random): Material {
 export function readerOf(material: Material): PropertyReader {
   const value: PropertyReader["value"] = (property, temperature) => material.material[property]!(temperature);
   const integral: PropertyReader["integral"] = (property, from, to) =>
-    simpson((temperature) => value(property, temperature, true), from, to, 2);
+    romberg((temperature) => value(property, temperature, true), from, to, 2);
   return {
     value,
     integral,
