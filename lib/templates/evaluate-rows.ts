@@ -10,7 +10,7 @@ import { materialSnapshots } from "@/lib/materials/snapshots";
 import { countUsage } from "@/lib/usage/count";
 import { definitionOf } from "./definition-cache";
 import { lifecycleOf, revisionToRun } from "./find-revision";
-import { defaultsOf, mustTypeProblems } from "./run-revision";
+import { defaultsOf, hasMustType, mustTypeProblems } from "./run-revision";
 import type { EvaluatedRows, RowAnswer } from "./schemas";
 
 /** Runs many rows of a template; a faulty row is answered in its place and spoils no other. */
@@ -33,6 +33,11 @@ export async function evaluateRows(
   const materials = await materialSnapshots(materialsNeededForRows(definition, request));
   const ran = await compute.evaluateRows(revision.definitionHash, definition, request, materials);
   countUsage(actor, revision.slug, revision.number, request.rows.length);
+  const mustType = actor.kind === "key" && hasMustType(definition);
+  const untyped = (index: number): FieldProblem[] => {
+    if (!mustType) return [];
+    return mustTypeProblems(definition, { ...input.common, ...input.rows[index] }, ["rows", index]);
+  };
   return {
     evaluation: {
       template: revision.slug,
@@ -40,11 +45,10 @@ export async function evaluateRows(
       definitionHash: revision.definitionHash,
       engine: engineVersion,
       units: ran.units,
-      rows: ran.rows.map((row, index) => {
-        const given = { ...input.common, ...input.rows[index] };
-        const untyped = actor.kind === "key" ? mustTypeProblems(definition, given, ["rows", index]) : [];
-        return withFaults(row, [...(ofRows.get(index) ?? []), ...untyped]);
-      }),
+      rows:
+        mustType || ofRows.size > 0
+          ? ran.rows.map((row, index) => withFaults(row, [...(ofRows.get(index) ?? []), ...untyped(index)]))
+          : ran.rows,
     },
     lifecycle: await lifecycleOf(revision),
   };

@@ -64,6 +64,10 @@ function mustBeTyped(symbol: string, label: string, place: readonly PropertyKey[
   };
 }
 
+export function hasMustType(definition: Definition): boolean {
+  return definition.inputs.some((input) => input.kind !== "table" && input.mustType === true);
+}
+
 /** Known before the run: inputs that always apply. The rest shows in what the run left to its default. */
 export function mustTypeProblems(
   definition: Definition,
