@@ -116,13 +116,40 @@ describe("hostile definitions", () => {
   });
 
   it("ends a run that overruns its time from outside, and goes on serving", async () => {
-    const impatient = new Compute({ run: 1.5, rows: 1.5 });
-    const slow = oneLine("y = series(n, 1, 1e9, bessel_j(0, x*n))");
-    const error = await refusedWith(impatient.evaluate(definitionHash(slow), slow, {}, {}));
-    expect(error.problems).toEqual([expect.objectContaining({ code: "budget-exceeded", limit: "1.5 s" })]);
+    // Each reading of the material stays below its own fuel; only the clock sees that there are hundreds of them.
+    const working = 'k = "1 W/(m·K)"*series(n, 1, 1e6, exp(-n/number_in(T, "K")))';
+    const range = { min: 1, max: 2000, unit: "K" };
+    const slowMaterial: Material = {
+      name: "Slow",
+      class: "other",
+      condition: "",
+      properties: {
+        k: {
+          pieces: [{ form: "working", working, range }],
+          argumentUnit: "K",
+          unit: "W/(m·K)",
+          source: "Made for a test.",
+          basis: "from memory",
+          status: "typical",
+        },
+      },
+    };
+    const definition = oneLine('y = x*number_in(m.k_mean("100 K", "1000 K"), "W/(m·K)")', {
+      inputs: [
+        { kind: "number", symbol: "x", label: "Number", quantity: "ratio", unit: "1", default: 1 },
+        { kind: "material", symbol: "m", label: "Material", needs: ["k"], default: "slow" },
+      ],
+    });
+    const materials = { slow: { slug: "slow", revision: 1, material: slowMaterial } };
+    const impatient = new Compute({ run: 0.1, rows: 10 });
+    const error = await refusedWith(
+      impatient.evaluate(definitionHash(definition), definition, {}, materials),
+    );
+    expect(error.problems).toEqual([expect.objectContaining({ code: "budget-exceeded", limit: "0.1 s" })]);
+    // The next run gets a fresh thread.
     const quick = oneLine("y = series(n, 1, 3, x*n)");
-    const run = await impatient.evaluate(definitionHash(quick), quick, {}, {});
-    expect(run.results.y?.value).toBe(6);
+    const { rows } = await impatient.evaluateRows(definitionHash(quick), quick, { rows: [{ x: 2 }] }, {});
+    expect(rows).toEqual([{ status: "ok", results: { y: 12 } }]);
     await impatient.close();
   });
 
