@@ -51,8 +51,6 @@ export interface SentError {
 
 export type Answer<Result> =
   { readonly ok: true; readonly result: Result } | { readonly ok: false; readonly error: SentError };
-export type RunAnswer = Answer<Evaluation>;
-export type RowsAnswer = Answer<RowsOutcome>;
 
 /** Rows finished since the message before. */
 export interface Progress {
