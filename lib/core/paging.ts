@@ -8,8 +8,14 @@ export const pageLimits = { default: 50, most: 200 } as const;
 
 /** Query members of every list. */
 export const pageQuery = {
-  limit: z.coerce.number().int().min(1).max(pageLimits.most).default(pageLimits.default),
-  cursor: z.string().min(1).max(400).optional(),
+  limit: z.coerce
+    .number()
+    .int()
+    .min(1)
+    .max(pageLimits.most)
+    .default(pageLimits.default)
+    .describe("Rows of a page."),
+  cursor: z.string().min(1).max(400).optional().describe("`nextCursor` of the page before."),
 };
 
 export interface Page<Item> {

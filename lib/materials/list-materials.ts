@@ -9,6 +9,7 @@ import { permit } from "@/lib/access/permit";
 import type { Material, Property } from "@/lib/calculation/material";
 import { pageOf, readCursor, type Page } from "@/lib/core/paging";
 import { matchesWords, searchWords } from "@/lib/core/search-words";
+import { fromSi, parseUnit, quantityByName, toSi } from "@/lib/units";
 import { materialFrom } from "./material-cache";
 import type { ListMaterialsQuery, MaterialItem } from "./schemas";
 
@@ -46,6 +47,9 @@ export async function listMaterials(actor: Actor, query: ListMaterialsQuery): Pr
   return pageOf(found, query.limit, (row) => [row.slug], item);
 }
 
+const temperature = quantityByName("temperature");
+const asTemperature = temperature ? { expect: temperature } : {};
+
 interface Row {
   slug: string;
   revision: typeof materialRevisions.$inferSelect;
@@ -73,13 +77,24 @@ function item({ slug, revision, material }: Row): MaterialItem {
   };
 }
 
-/** From the least to the greatest end of the pieces. */
+/** From the least to the greatest end of the pieces, in the unit of the property's argument. */
 function rangeOf(property: Property): MaterialItem["properties"][string] {
+  const ends = property.pieces.map(({ range }) => ({
+    min: convert(range.min, range.unit, property.argumentUnit),
+    max: convert(range.max, range.unit, property.argumentUnit),
+  }));
   return {
     unit: property.unit,
-    min: Math.min(...property.pieces.map((piece) => piece.range.min)),
-    max: Math.max(...property.pieces.map((piece) => piece.range.max)),
-    argumentUnit: property.pieces[0]?.range.unit ?? property.argumentUnit,
+    min: Math.min(...ends.map(({ min }) => min)),
+    max: Math.max(...ends.map(({ max }) => max)),
+    argumentUnit: property.argumentUnit,
     basis: property.basis,
   };
+}
+
+function convert(value: number, from: string, to: string): number {
+  if (from === to) return value;
+  const [source, target] = [parseUnit(from, asTemperature), parseUnit(to, asTemperature)];
+  if (!source.ok || !target.ok) throw new Error(`A material was stored with the unit ${from} or ${to}.`);
+  return fromSi(toSi(value, source.value, "absolute"), target.value, "absolute");
 }

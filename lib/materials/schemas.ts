@@ -11,7 +11,7 @@ const Moment = z.iso.datetime();
 /** A registered schema followed by `.nullable()` is written as one that refuses null; a union is not. */
 export const orNull = <T extends z.ZodType>(schema: T) => z.union([schema, z.null()]);
 
-export const RevisionNumber = z.coerce.number().int().min(1).max(1_000_000);
+export const RevisionNumber = z.coerce.number().int().min(1).max(1_000_000).describe("Number of a revision.");
 
 /** Somebody as named beside what they did; the supplied set has no id. */
 export const Named = z.object({ id: orNull(z.string()), name: z.string() });
@@ -41,8 +41,10 @@ export const RevisionMembers = z.object({
   reasonForChange: orNull(z.string()),
 });
 
-export const MaterialParam = z.object({ slug: Slug });
-export const MaterialRevisionParam = z.object({ slug: Slug, revision: RevisionNumber });
+const MaterialSlug = Slug.describe("Slug of the material.");
+
+export const MaterialParam = z.object({ slug: MaterialSlug });
+export const MaterialRevisionParam = z.object({ slug: MaterialSlug, revision: RevisionNumber });
 
 /** Properties by name; the names are those of the working language. */
 export const PropertyRange = z.object({
@@ -83,24 +85,58 @@ export const MaterialView = z.object({
 
 export const ListMaterialsQuery = z.strictObject({
   ...pageQuery,
-  /** Words that name, condition or slug begin with. */
-  search: z.string().trim().min(1).max(120).optional(),
-  class: z.enum(materialClasses).optional(),
-  state: z.enum(revisionStates).optional(),
+  search: z
+    .string()
+    .trim()
+    .min(1)
+    .max(120)
+    .optional()
+    .describe("Beginnings of words in name, class, condition or slug; all must be found."),
+  class: z.enum(materialClasses).optional().describe("Only this class."),
+  state: z.enum(revisionStates).optional().describe("Only revisions in this state."),
 });
 
-export const PropertyParam = z.object({ slug: Slug, name: z.string().min(1).max(32) });
+export const PropertyParam = z.object({
+  slug: MaterialSlug,
+  name: z
+    .string()
+    .min(1)
+    .max(32)
+    .describe("Property as the working language calls it: `k`, `rho`, `c`, `eps` …"),
+});
 export const PropertyValueQuery = z.strictObject({
-  /** Temperature: a number in `unit`, or an amount such as `480 °F`. */
-  T: z.string().trim().min(1).max(64),
-  /** Other end of a range: the mean over it is answered. */
-  to: z.string().trim().min(1).max(64).optional(),
-  /** Unit of bare numbers in `T` and `to`; without it the unit of the property's argument. */
-  unit: z.string().trim().min(1).max(48).optional(),
-  /** Unit of the answer; without it the unit of the property. */
-  in: z.string().trim().min(1).max(48).optional(),
+  T: z
+    .string()
+    .trim()
+    .min(1)
+    .max(64)
+    .describe("Temperature: a number in `unit`, or an amount such as `480 °F`."),
+  to: z
+    .string()
+    .trim()
+    .min(1)
+    .max(64)
+    .optional()
+    .describe("Other end of a range: the mean from `T` to it is answered."),
+  unit: z
+    .string()
+    .trim()
+    .min(1)
+    .max(48)
+    .optional()
+    .describe("Unit of bare numbers in `T` and `to`; without it that of the property's argument."),
+  in: z
+    .string()
+    .trim()
+    .min(1)
+    .max(48)
+    .optional()
+    .describe("Unit of the answer; without it that of the property."),
   revision: RevisionNumber.optional(),
-  allowExtrapolation: z.enum(["true", "false"]).optional(),
+  allowExtrapolation: z
+    .enum(["true", "false"])
+    .optional()
+    .describe("Read outside the valid range, with a caution."),
 });
 export const PropertyValue = z.object({
   material: z.string(),

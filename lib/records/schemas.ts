@@ -12,7 +12,7 @@ const Moment = z.iso.datetime();
 
 export const recordNumberPattern = /^R-\d{6,12}$/;
 export const RecordNumber = z.string().regex(recordNumberPattern, "A record's number looks like R-000001.");
-export const RecordParam = z.object({ number: RecordNumber });
+export const RecordParam = z.object({ number: RecordNumber.describe("Number of the record, `R-000001`.") });
 
 export const Tag = z.string().trim().min(1).max(64);
 
@@ -70,18 +70,20 @@ export const RecordPage = z.object({ items: z.array(RecordItem), nextCursor: orN
 
 export const ListRecordsQuery = z.strictObject({
   ...pageQuery,
-  template: Slug.optional(),
+  template: Slug.optional().describe("Slug of the template."),
   revision: RevisionNumber.optional(),
-  tag: Tag.optional(),
-  status: Status.optional(),
-  /** `me`, or the id of the person who answers for the record. */
-  owner: z.string().min(1).max(64).optional(),
-  voided: z.enum(["true", "false"]).optional(),
-  /** First and last moment of creation, RFC 3339. */
-  from: z.iso.datetime({ offset: true }).optional(),
-  to: z.iso.datetime({ offset: true }).optional(),
-  /** Part of the title, or a record's number. */
-  search: z.string().trim().min(1).max(120).optional(),
+  tag: Tag.optional().describe("Only records with this tag."),
+  status: Status.optional().describe("Only runs that ended so."),
+  owner: z
+    .string()
+    .min(1)
+    .max(64)
+    .optional()
+    .describe("`me`, or the id of the person who answers for the record."),
+  voided: z.enum(["true", "false"]).optional().describe("Only void records, or only those that stand."),
+  from: z.iso.datetime({ offset: true }).optional().describe("First moment of creation."),
+  to: z.iso.datetime({ offset: true }).optional().describe("Last moment of creation."),
+  search: z.string().trim().min(1).max(120).optional().describe("Part of the title, or a record's number."),
 });
 
 export const VoidRecordBody = z.strictObject({ reason: z.string().trim().min(1).max(600) });

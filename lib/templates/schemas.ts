@@ -10,8 +10,10 @@ import { Named, orNull, RevisionMembers, RevisionNumber } from "@/lib/materials/
 
 const Moment = z.iso.datetime();
 
-export const SlugParam = z.object({ slug: Slug });
-export const RevisionParam = z.object({ slug: Slug, revision: RevisionNumber });
+const TemplateSlug = Slug.describe("Slug of the template.");
+
+export const SlugParam = z.object({ slug: TemplateSlug });
+export const RevisionParam = z.object({ slug: TemplateSlug, revision: RevisionNumber });
 
 export const RevisionSummary = z.object({ template: z.string(), ...RevisionMembers.shape });
 export const RevisionView = z.object({ ...RevisionSummary.shape, definition: Definition });
@@ -46,10 +48,15 @@ export const RevisionPage = z.object({ items: z.array(RevisionSummary), nextCurs
 
 export const ListTemplatesQuery = z.strictObject({
   ...pageQuery,
-  /** Words that title, tag, symbol or quantity begin with. */
-  search: z.string().trim().min(1).max(120).optional(),
-  category: z.enum(categories).optional(),
-  state: z.enum(revisionStates).optional(),
+  search: z
+    .string()
+    .trim()
+    .min(1)
+    .max(120)
+    .optional()
+    .describe("Beginnings of words in title, tags, symbols, labels or quantities; all must be found."),
+  category: z.enum(categories).optional().describe("Only this category."),
+  state: z.enum(revisionStates).optional().describe("Only revisions in this state."),
 });
 export const ListRevisionsQuery = z.strictObject(pageQuery);
 
