@@ -1,4 +1,5 @@
-export type NumericFaultCode = "no-sign-change" | "pole" | "not-finite" | "not-converged";
+export type NumericFaultCode =
+  "no-sign-change" | "pole" | "not-finite" | "not-converged" | "dependent-columns";
 
 /** A numerical method that could not do what it was asked; `details` holds the numbers that show why. */
 export class NumericFault extends Error {
