@@ -147,6 +147,19 @@ q = f(a)*2 + wall.k("300 K" + a*"1 ΔK")`,
     expect(shared.run({ ...given, mode: 1 }).p).toBe(shared.run({ ...given, mode: 1 }).q);
   });
 
+  it("keeps the variables of special forms apart, however deep a function with one is called", () => {
+    const nested = program(
+      `root(x) = balance(u, 0, 10, u*u - x)
+p = a > 5 ? root(4) : 0
+q = series(n, 1, 3, n*n + root(4))
+r = series(n, 1, 3, n*n + root(n*n) + series(m, 1, 2, m*m + root(n*n)))`,
+    );
+    const values = nested.run(given);
+    expect(values.p).toBe(0);
+    expect(values.q).toBeCloseTo(14 + 6, 12);
+    expect(values.r).toBeCloseTo(14 + 6 + 3 * 5 + 2 * 6, 12);
+  });
+
   it("includes arguments that a function's branch does not read", () => {
     const strict = program("f(x, y) = a > 0 ? x : y\nz = f(1, at(rows.n, 7))");
     expect(strict.fault(given)).toMatchObject({ code: "out-of-range", symbol: "z" });

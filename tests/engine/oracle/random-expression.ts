@@ -163,6 +163,16 @@ export class RandomExpressions {
   private function(shape: Shape, depth: number): string {
     const { random } = this;
     const x = (): string => this.of("number", shape, depth);
+    // Now and then a step that is not defined everywhere, so that faults are compared as well.
+    if (random.chance(0.03)) {
+      return random.pick([
+        `sqrt(${x()})`,
+        `ln(${x()})`,
+        `(1/floor(${x()}))`,
+        `acosh(${x()})`,
+        `(${x()}^0.3)`,
+      ]);
+    }
     const bounded = (): string => `clamp(${x()}, -${random.whole(1, 2)}, ${random.whole(2, 4)})`;
     return random.pick([
       () => `${random.pick(["sin", "cos", "tanh", "atan", "erf", "asinh"])}(${x()})`,
@@ -254,6 +264,7 @@ export class RandomExpressions {
     const { random } = this;
     const shape = random.pick([0, 0, 0, 1]);
     const list = (wanted = shape): string => this.of(kind, wanted, depth);
+    if (random.chance(0.03)) return `at(${list()}, ${random.whole(1, 5)})`;
     const options = [
       () => `${random.pick(["mean", "min", "max", "first", "last"])}(${list()})`,
       () => `at(${list()}, 1)`,
@@ -299,6 +310,13 @@ export class RandomExpressions {
       () => `argmin(${variable}, ${middle} - ${width}, ${middle} + ${width}, (${relative} - ${still})^2 + 1)`,
       () => `fixed_point(${variable}, ${middle}, ${middle} + ${width}*(0.3*sin(${relative}) + ${still}))`,
     ];
+    if (this.random.chance(0.05)) {
+      return this.random.pick([
+        `balance(${variable}, ${middle} - ${width}, ${middle} + ${width}, ${relative}^2 + 0.1)`,
+        `argmin(${variable}, ${middle} + ${width}, ${middle} - ${width}, ${relative}^2)`,
+        `balance(${variable}, ${middle} - ${width}, ${middle} + ${width}, ${relative} + 0*ln(${relative} + 0.5))`,
+      ]);
+    }
     if (kind !== "temperature") {
       const n = `v${this.at.names.next++}`;
       const counted = inside({ text: n, kind: "number", shape: null });
