@@ -1,11 +1,5 @@
 import type { MessagePort } from "node:worker_threads";
-import type {
-  Evaluation,
-  RowOutcome,
-  RowsOutcome,
-  RowsRequest,
-  RunRequest,
-} from "@/lib/calculation/evaluation";
+import type { RowOutcome, RowsOutcome, RowsRequest, RunRequest } from "@/lib/calculation/evaluation";
 import type { ErrorCode, FieldProblem } from "@/lib/core/errors";
 
 /** What passes between the server and a worker: plain data only. */
