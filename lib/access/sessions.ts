@@ -55,14 +55,6 @@ export async function endSession(tx: Tx, sessionId: string): Promise<boolean> {
   return ended.length === 1;
 }
 
-/** Ends whatever a person has open. */
-export async function endSessionsOf(tx: Tx, personId: string): Promise<void> {
-  await tx
-    .update(sessions)
-    .set({ endedAt: now() })
-    .where(and(eq(sessions.personId, personId), isNull(sessions.endedAt)));
-}
-
 // Nobody waits for this: a request is not refused because its time of day could not be noted.
 function markSeen(sessionId: string, at: Date): void {
   write((tx) =>

@@ -134,14 +134,6 @@ export interface NumberType {
   readonly literalZero?: true;
 }
 
-export type ValueType =
-  | NumberType
-  | { readonly is: "condition" }
-  /** A choice input read whole (only to be compared with an option's key). */
-  | { readonly is: "choice"; readonly symbol: string }
-  /** A material input, or the material column of a table (`list`). */
-  | { readonly is: "material"; readonly symbol: string; readonly column: string | null };
-
 // ───────────────────────────── checked program
 
 export const propertyNames = ["k", "k_along", "k_across", "rho", "c", "eps", "rho_e", "mu"] as const;
