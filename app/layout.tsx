@@ -21,8 +21,8 @@ export const viewport: Viewport = {
   ],
 };
 
-/** Sets the scheme before the first paint: the person's choice, else the system's. */
-const schemeScript = `(function(){try{var s=localStorage.getItem("coldface-scheme");var d=s?s==="dark":matchMedia("(prefers-color-scheme: dark)").matches;document.documentElement.classList.toggle("dark",d)}catch(e){}})()`;
+/** Sets the scheme before the first paint: the person's choice, else the system's, which is followed when it changes. */
+const schemeScript = `(function(){var m=matchMedia("(prefers-color-scheme: dark)");function set(){var s=null;try{s=localStorage.getItem("coldface-scheme")}catch(e){}document.documentElement.classList.toggle("dark",s?s==="dark":m.matches)}set();m.addEventListener("change",set)})()`;
 
 export default async function RootLayout({ children }: { children: ReactNode }) {
   // Pages are never prerendered: a nonce belongs to one answer.

@@ -25,6 +25,11 @@ export class ApiProblem extends Error {
   }
 }
 
+/** Whether asking the same again may help: no answer came, or the server is busy. */
+export function isPassing(error: unknown): boolean {
+  return error instanceof ApiProblem && (error.status === 0 || error.status === 503);
+}
+
 interface ProblemDocument {
   type?: string;
   title?: string;

@@ -2,9 +2,12 @@
 
 import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
 import { useState, type ReactNode } from "react";
-import { ApiProblem } from "./api-client";
+import { isPassing } from "./api-client";
 
-/** One query client for the signed-in pages. A refusal is an answer and is not asked again; a lost connection is. */
+/**
+ * One query client for the signed-in pages. A refusal is an answer and is not asked again; a lost connection is. Calls
+ * are made also where the browser believes to be offline: it is sometimes wrong, and a call that waits says nothing.
+ */
 export function QueryProvider({ children }: { children: ReactNode }) {
   const [client] = useState(
     () =>
@@ -13,9 +16,11 @@ export function QueryProvider({ children }: { children: ReactNode }) {
           queries: {
             staleTime: 60_000,
             refetchOnWindowFocus: false,
-            retry: (failures, error) =>
-              failures < 2 && error instanceof ApiProblem && (error.status === 0 || error.status === 503),
+            networkMode: "always",
+            refetchOnReconnect: true,
+            retry: (failures, error) => failures < 2 && isPassing(error),
           },
+          mutations: { networkMode: "always" },
         },
       }),
   );

@@ -18,7 +18,8 @@ interface PickerProps {
   constant: { text: string; unit: string } | null;
   materials: readonly MaterialChoice[];
   onPick: (slug: string, constant: { text: string; unit: string } | null) => void;
-  fault?: string;
+  /** The element that says what is wrong with the choice, when something is. */
+  faultId?: string;
 }
 
 const constantKey = "\u0000constant";
@@ -34,13 +35,14 @@ export function MaterialPicker({
   constant,
   materials,
   onPick,
-  fault,
+  faultId,
 }: PickerProps) {
   const fitting = materials.filter((material) =>
     needs.every((property) => material.properties.includes(property)),
   );
   const groups = [...new Set(fitting.map((material) => material.class))].sort();
-  const border = fault ? "border-fault" : "border-rule";
+  const border = faultId ? "border-fault" : "border-rule";
+  const told = { "aria-invalid": faultId ? true : undefined, "aria-describedby": faultId };
   return (
     <div className="grid min-w-0 gap-1">
       <select
@@ -52,7 +54,7 @@ export function MaterialPicker({
             ? onPick("", { text: "", unit: "W/(m·K)" })
             : onPick(event.target.value, null)
         }
-        aria-invalid={fault ? true : undefined}
+        {...(constant ? {} : told)}
         aria-label={label}
         className={`h-8 w-full min-w-0 rounded border bg-field px-2 disabled:text-muted max-md:h-11 ${border}`}
       >
@@ -78,6 +80,7 @@ export function MaterialPicker({
           value={constant.text}
           onChange={(event) => onPick("", { text: event.target.value, unit: constant.unit })}
           placeholder="0.045 W/(m·K)"
+          {...told}
           aria-label={`${label}, constant value with unit`}
           maxLength={80}
           className={`num h-8 w-full rounded border bg-field px-2 text-right text-[13px] max-md:h-11 ${border}`}
@@ -119,10 +122,14 @@ export function MaterialInput({ input, state, materials, onChange, fault }: Prop
         constant={state.constant}
         materials={materials}
         onPick={(slug, constant) => onChange({ ...state, slug, constant, origin: "typed" })}
-        fault={fault}
+        faultId={fault ? `${id}-fault` : undefined}
       />
       <div className="col-span-2 text-[12px] leading-4">
-        {fault ? <p className="mt-0.5 text-fault">{fault}</p> : null}
+        {fault ? (
+          <p id={`${id}-fault`} className="mt-0.5 text-fault">
+            {fault}
+          </p>
+        ) : null}
         {chosen ? (
           <p className="mt-0.5 text-muted">
             {chosen.ranges[input.needs[0] ?? "k"] ? `valid ${chosen.ranges[input.needs[0] ?? "k"]}; ` : ""}

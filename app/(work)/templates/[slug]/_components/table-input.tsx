@@ -1,16 +1,17 @@
 "use client";
 
 import { ArrowDown, ArrowUp, X } from "lucide-react";
-import { useId, type ClipboardEvent } from "react";
+import { useId, useRef } from "react";
+import { flushSync } from "react-dom";
 import { TextButton } from "@/app/_components/ui/button";
 import type { Column, TableInput as TableDeclaration } from "@/lib/calculation/definition";
 import { cellState, type CellState, type RowState, type TableState } from "./form-state";
-import { MaterialPicker } from "./material-input";
 import { readAmount } from "./build-request";
 import { UnitSelect } from "@/app/_components/unit-select";
 import { convertText, unitsFor } from "./use-units";
 import { rowsFromClipboard } from "./paste-rows";
 import { PasteDialog } from "./paste-dialog";
+import { TableCell } from "./table-cell";
 import type { MaterialChoice } from "./material-choice";
 
 interface Props {
@@ -23,34 +24,39 @@ interface Props {
   fault?: string;
 }
 
-const cellInput =
-  "num h-[30px] w-full min-w-0 rounded border bg-field px-2 text-right text-[13px] font-medium max-md:h-11";
-
 /** Rows of a table: typed, added, moved, removed, or pasted from a spreadsheet. */
 export function TableInput({ input, state, materials, onChange, faults, fault }: Props) {
   const id = useId();
+  const body = useRef<HTMLTableSectionElement>(null);
   const change = (rows: RowState[], units = state.units) =>
     onChange({ ...state, rows, units, origin: "typed" });
+  // Whoever moves a row by keyboard goes with it, and is not thrown to the top of the page when it is gone.
+  const changeAndGoTo = (rows: RowState[], row: number, wanted: string) => {
+    flushSync(() => change(rows));
+    const places = body.current?.children[row]?.querySelectorAll<HTMLElement>(wanted);
+    [...(places ?? [])].find((place) => !place.matches(":disabled"))?.focus();
+  };
   const setCell = (index: number, symbol: string, cell: CellState) =>
     change(state.rows.map((row, at) => (at === index ? { cells: { ...row.cells, [symbol]: cell } } : row)));
   const move = (from: number, to: number) => {
     const rows = [...state.rows];
     const [row] = rows.splice(from, 1);
     if (row) rows.splice(to, 0, row);
-    change(rows);
+    changeAndGoTo(rows, to, to < from ? "[data-move=up], button" : "[data-move=down], button");
   };
-  const add = () =>
-    change([
-      ...state.rows,
-      {
-        cells: Object.fromEntries(
-          input.columns.map((column) => [
-            column.symbol,
-            cellState(column, undefined, state.units[column.symbol]),
-          ]),
-        ),
-      },
-    ]);
+  const remove = (index: number) => {
+    const rows = state.rows.filter((_, at) => at !== index);
+    changeAndGoTo(rows, Math.min(index, rows.length - 1), "[data-move=none], input, select");
+  };
+  const add = () => {
+    const cells = Object.fromEntries(
+      input.columns.map((column) => [
+        column.symbol,
+        cellState(column, undefined, state.units[column.symbol]),
+      ]),
+    );
+    changeAndGoTo([...state.rows, { cells }], state.rows.length, "input, select");
+  };
   const paste = (text: string, atRow: number, atColumn: number) => {
     const pasted = rowsFromClipboard(text, input, state, atRow, atColumn);
     if (pasted) change(pasted);
@@ -66,30 +72,31 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
     });
     change(rows, { ...state.units, [column.symbol]: unit });
   };
-  const messages = Object.entries(faults);
+  const faultId = (place: string) => `${id}-fault-${place}`;
 
   return (
     <fieldset
       className="min-w-0 border-t border-soft px-6 pb-4 pt-3 max-md:px-4"
-      aria-describedby={`${id}-faults`}
+      aria-describedby={fault ? faultId("table") : undefined}
     >
       <legend className="sr-only">{input.label}</legend>
       <h2 aria-hidden="true" className="mb-2">
         {input.label}
         {state.origin === "default" ? <small>default, not typed</small> : null}
       </h2>
-      <div className="overflow-x-auto">
-        <table className="w-full border-collapse">
-          <thead>
-            <tr>
+      <div className="overflow-x-auto max-md:overflow-visible">
+        <table role="table" className="w-full border-collapse max-md:block">
+          <thead role="rowgroup" className="max-md:block">
+            <tr role="row" className="max-md:flex max-md:flex-wrap max-md:gap-x-4">
               {input.columns.map((column) => (
                 <th
                   key={column.symbol}
                   scope="col"
-                  className="pb-1 pr-2 text-left align-bottom text-[12px] font-normal leading-4 text-muted"
+                  role="columnheader"
+                  className={`pb-1 pr-2 text-left align-bottom text-[12px] font-normal leading-4 text-muted max-md:flex max-md:items-center max-md:gap-1.5 max-md:p-0 ${hasUnit(column) ? "" : "max-md:sr-only"}`}
                 >
                   <span className="block">{column.label}</span>
-                  {column.kind === "number" && column.unit !== "1" ? (
+                  {hasUnit(column) ? (
                     <UnitSelect
                       value={state.units[column.symbol] ?? column.unit}
                       units={unitsFor(column.quantity, column.unit)}
@@ -100,36 +107,53 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
                   ) : null}
                 </th>
               ))}
-              <th className="w-[66px]">
+              <th role="columnheader" className="w-[72px] max-md:sr-only">
                 <span className="sr-only">Move or remove</span>
               </th>
             </tr>
           </thead>
-          <tbody>
+          <tbody role="rowgroup" ref={body} className="max-md:block">
             {state.rows.map((row, index) => (
-              <tr key={index}>
-                {input.columns.map((column, columnIndex) => (
-                  <td
-                    key={column.symbol}
-                    className={`py-0.5 pr-1.5 align-middle ${column.kind === "number" ? "w-[80px]" : "min-w-[98px]"}`}
-                  >
-                    <Cell
-                      column={column}
-                      cell={row.cells[column.symbol]}
-                      name={`${column.label}, row ${index + 1}`}
-                      fault={faults[`${index}.${column.symbol}`] ?? faults[String(index)]}
-                      materials={materials}
-                      onChange={(cell) => setCell(index, column.symbol, cell)}
-                      onPaste={(event) => {
-                        if (paste(event.clipboardData.getData("text/plain"), index, columnIndex))
-                          event.preventDefault();
-                      }}
-                    />
-                  </td>
-                ))}
-                <td className="whitespace-nowrap text-right">
+              <tr
+                key={index}
+                role="row"
+                className="max-md:flex max-md:flex-wrap max-md:items-end max-md:gap-x-2 max-md:border-t max-md:border-soft max-md:py-2"
+              >
+                {input.columns.map((column, columnIndex) => {
+                  const place = [`${index}.${column.symbol}`, String(index)].find((key) => key in faults);
+                  return (
+                    <td
+                      key={column.symbol}
+                      role="cell"
+                      className={`py-0.5 pr-1.5 align-middle max-md:min-w-0 max-md:flex-1 max-md:p-0 ${column.kind === "number" ? "w-[80px]" : "min-w-[98px]"} ${columnIndex === 0 ? "max-md:basis-[calc(100%-144px)]" : "max-md:order-2 max-md:basis-[calc(50%-8px)]"}`}
+                    >
+                      {columnIndex === 0 ? null : (
+                        <span
+                          aria-hidden="true"
+                          className="hidden truncate pt-1 text-[12px] leading-4 text-muted max-md:block"
+                        >
+                          {column.label}
+                        </span>
+                      )}
+                      <TableCell
+                        column={column}
+                        cell={row.cells[column.symbol]}
+                        name={`${column.label}, row ${index + 1}`}
+                        faultId={place === undefined ? undefined : faultId(place)}
+                        materials={materials}
+                        onChange={(cell) => setCell(index, column.symbol, cell)}
+                        onPaste={(event) => {
+                          if (paste(event.clipboardData.getData("text/plain"), index, columnIndex))
+                            event.preventDefault();
+                        }}
+                      />
+                    </td>
+                  );
+                })}
+                <td role="cell" className="whitespace-nowrap text-right max-md:order-1 max-md:-mr-3">
                   <RowButton
                     label={`Move row ${index + 1} up`}
+                    move="up"
                     disabled={index === 0}
                     onClick={() => move(index, index - 1)}
                   >
@@ -137,6 +161,7 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
                   </RowButton>
                   <RowButton
                     label={`Move row ${index + 1} down`}
+                    move="down"
                     disabled={index === state.rows.length - 1}
                     onClick={() => move(index, index + 1)}
                   >
@@ -144,8 +169,9 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
                   </RowButton>
                   <RowButton
                     label={`Remove row ${index + 1}`}
+                    move="none"
                     disabled={state.rows.length <= input.minRows}
-                    onClick={() => change(state.rows.filter((_, at) => at !== index))}
+                    onClick={() => remove(index)}
                   >
                     <X size={14} aria-hidden="true" />
                   </RowButton>
@@ -155,10 +181,14 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
           </tbody>
         </table>
       </div>
-      <div id={`${id}-faults`} className="text-[12px] leading-4 text-fault">
-        {fault ? <p className="mt-1">{fault}</p> : null}
-        {messages.map(([place, message]) => (
-          <p key={place} className="mt-1">
+      <div className="text-[12px] leading-4 text-fault">
+        {fault ? (
+          <p id={faultId("table")} className="mt-1">
+            {fault}
+          </p>
+        ) : null}
+        {Object.entries(faults).map(([place, message]) => (
+          <p key={place} id={faultId(place)} className="mt-1">
             Row {Number(place.split(".")[0]) + 1}: {message}
           </p>
         ))}
@@ -173,11 +203,17 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
   );
 }
 
+function hasUnit(column: Column): column is Extract<Column, { kind: "number" }> {
+  return column.kind === "number" && column.unit !== "1";
+}
+
 function RowButton({
   label,
+  move,
   ...rest
 }: {
   label: string;
+  move: "up" | "down" | "none";
   disabled: boolean;
   onClick: () => void;
   children: React.ReactNode;
@@ -186,89 +222,9 @@ function RowButton({
     <button
       type="button"
       aria-label={label}
-      className="inline-flex size-[22px] items-center justify-center rounded text-muted hover:text-ink disabled:opacity-30 max-md:h-11 max-md:w-7"
+      data-move={move}
+      className="inline-flex size-6 items-center justify-center rounded text-muted hover:text-ink disabled:opacity-30 max-md:size-11"
       {...rest}
     />
   );
-}
-
-interface CellProps {
-  column: Column;
-  cell: CellState | undefined;
-  name: string;
-  fault?: string;
-  materials: readonly MaterialChoice[];
-  onChange: (cell: CellState) => void;
-  onPaste: (event: ClipboardEvent) => void;
-}
-
-function Cell({ column, cell, name, fault, materials, onChange, onPaste }: CellProps) {
-  const id = useId();
-  const border = fault ? "border-fault" : "border-rule";
-  if (cell?.kind === "number" && column.kind === "number") {
-    const settle = () => {
-      const amount = readAmount(column, cell.text, cell.unit);
-      if (!amount.ok || amount.unit === cell.unit) return;
-      const converted = convertText(amount.value, amount.unit, cell.unit, column.quantity);
-      if (converted !== null) onChange({ ...cell, text: converted });
-    };
-    return (
-      <input
-        value={cell.text}
-        onChange={(event) => onChange({ ...cell, text: event.target.value })}
-        onBlur={settle}
-        onPaste={onPaste}
-        aria-label={name}
-        aria-invalid={fault ? true : undefined}
-        autoComplete="off"
-        maxLength={80}
-        className={`${cellInput} ${border}`}
-      />
-    );
-  }
-  if (cell?.kind === "text") {
-    return (
-      <input
-        value={cell.text}
-        onChange={(event) => onChange({ ...cell, text: event.target.value })}
-        onPaste={onPaste}
-        aria-label={name}
-        maxLength={column.kind === "text" ? column.maxLength : 80}
-        className={`h-[30px] w-full min-w-0 rounded border bg-field px-2 max-md:h-11 ${border}`}
-      />
-    );
-  }
-  if (cell?.kind === "choice" && column.kind === "choice") {
-    return (
-      <select
-        value={cell.option}
-        onChange={(event) => onChange({ ...cell, option: event.target.value })}
-        aria-label={name}
-        className={`h-[30px] w-full rounded border bg-field px-1 max-md:h-11 ${border}`}
-      >
-        {cell.option === "" ? <option value="">choose</option> : null}
-        {column.options.map((option) => (
-          <option key={option.key} value={option.key}>
-            {option.label}
-          </option>
-        ))}
-      </select>
-    );
-  }
-  if (cell?.kind === "material" && column.kind === "material") {
-    return (
-      <MaterialPicker
-        id={id}
-        label={name}
-        needs={column.needs}
-        orConstant={column.orConstant}
-        slug={cell.slug}
-        constant={cell.constant}
-        materials={materials}
-        onPick={(slug, constant) => onChange({ ...cell, slug, constant })}
-        fault={fault}
-      />
-    );
-  }
-  return null;
 }

@@ -2,7 +2,7 @@
 
 import { keepPreviousData, useQuery } from "@tanstack/react-query";
 import { useEffect, useState } from "react";
-import { ApiProblem, callApi } from "@/app/_components/api-client";
+import { ApiProblem, callApi, isPassing } from "@/app/_components/api-client";
 import type { TemplateEvaluation } from "@/lib/calculation/evaluation";
 import type { BuiltRequest } from "./build-request";
 
@@ -37,10 +37,15 @@ export function useEvaluation({ slug, revision, built, units }: Asked) {
       }),
     enabled: readable,
     placeholderData: keepPreviousData,
+    // A lost connection is said at once and tried until it is back; nobody has to press anything.
+    retry: (_, error) => isPassing(error),
+    retryDelay: (failures) => Math.min(1000 * 2 ** failures, 5000),
   });
-  const problem = readable && query.error instanceof ApiProblem ? query.error : null;
+  const failure = query.error ?? query.failureReason;
+  const problem = readable && failure instanceof ApiProblem ? failure : null;
   // After a refusal the query holds no data; what was last answered is kept for the page to show as waiting.
   const [last, setLast] = useState<TemplateEvaluation | null>(null);
   if (query.data && query.data !== last) setLast(query.data);
-  return { evaluation: query.data ?? last, problem, pending: query.isFetching || settled !== body };
+  const pending = (query.isFetching && problem === null) || settled !== body;
+  return { evaluation: query.data ?? last, problem, pending };
 }
