@@ -1,5 +1,4 @@
-export type NumericFaultCode =
-  "no-sign-change" | "pole" | "not-finite" | "not-converged" | "dependent-columns";
+export type NumericFaultCode = "no-sign-change" | "pole" | "not-finite" | "not-converged";
 
 /** A numerical method that could not do what it was asked; `details` holds the numbers that show why. */
 export class NumericFault extends Error {

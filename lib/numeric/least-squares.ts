@@ -8,6 +8,8 @@ export interface LeastSquares {
   readonly residualStandardDeviation: number;
   /** Standard error of each coefficient; NaN when there are as many columns as rows. */
   readonly standardErrors: readonly number[];
+  /** Covariances of the coefficients, s²·(AᵀA)⁻¹ row by row; NaN when there are as many columns as rows. */
+  readonly covariance: readonly (readonly number[])[];
 }
 
 /** A column whose part that the others do not explain is below this part of itself depends on them. */
@@ -16,21 +18,21 @@ const dependence = 1e-12;
 /**
  * The coefficients that bring Σ column_j·coefficient_j nearest to y (smallest Σ residual²), by Householder's QR
  * decomposition (G. H. Golub and C. F. Van Loan, Matrix Computations, 4th ed., §5.3.2) of the columns scaled to length 1,
- * so that units of the columns do not matter. Standard errors from s²·(RᵀR)⁻¹. `columns` holds one list per coefficient,
- * each as long as `y`. Throws RangeError on differing lengths, fewer rows than columns, values that are not finite, and
- * columns that depend on one another.
+ * so that units of the columns do not matter. Standard errors from s²·(RᵀR)⁻¹, for independent deviations of
+ * equal size. `columns` holds one list per coefficient, each as long as `y`. Throws RangeError on differing lengths, fewer
+ * rows than columns, values that are not finite, and columns that depend on one another.
  */
 export function leastSquares(columns: readonly (readonly number[])[], y: readonly number[]): LeastSquares {
   const rows = y.length;
   const count = columns.length;
   requireProblem(columns, y);
-  const scales = columns.map((column) => Math.hypot(...column));
+  const scales = columns.map((column) => norm(column));
   const a = columns.map((column, j) => Float64Array.from(column, (value) => value / scales[j]!));
   const right = Float64Array.from(y);
   const diagonal = new Float64Array(count);
   for (let j = 0; j < count; j += 1) {
     const v = a[j]!;
-    const length = Math.hypot(...v.subarray(j));
+    const length = norm(v.subarray(j));
     if (!(length > dependence))
       throw new RangeError(
         `Column ${j + 1} of the fit depends on the columns before it, so its coefficient is undetermined.`,
@@ -47,12 +49,17 @@ export function leastSquares(columns: readonly (readonly number[])[], y: readonl
     columns.reduce((rest, column, j) => rest - column[i]! * coefficients[j]!, value),
   );
   const freedom = rows - count;
-  const deviation = freedom > 0 ? Math.hypot(...residuals) / Math.sqrt(freedom) : NaN;
+  const deviation = freedom > 0 ? norm(residuals) / Math.sqrt(freedom) : NaN;
+  const errors = inverseRows(a, diagonal).map((row, j) =>
+    row.map((value) => (deviation * value) / scales[j]!),
+  );
+  const covariance = errors.map((row) => errors.map((other) => product(row, other)));
   return {
     coefficients,
     residuals,
     residualStandardDeviation: deviation,
-    standardErrors: inverseRowLengths(a, diagonal).map((length, j) => (deviation * length) / scales[j]!),
+    standardErrors: errors.map((row) => norm(row)),
+    covariance,
   };
 }
 
@@ -102,16 +109,25 @@ function backSubstitute(
   return x;
 }
 
-/** Lengths of the rows of R⁻¹, the roots of the diagonal of (RᵀR)⁻¹. */
-function inverseRowLengths(a: readonly Float64Array[], diagonal: Float64Array): number[] {
-  const count = diagonal.length;
-  const squares = new Float64Array(count);
-  for (let j = 0; j < count; j += 1) {
-    const unit = new Float64Array(count);
+/** Rows of R⁻¹, whose products with one another make (RᵀR)⁻¹. */
+function inverseRows(a: readonly Float64Array[], diagonal: Float64Array): Float64Array[] {
+  const columns = a.map((_, j) => {
+    const unit = new Float64Array(diagonal.length);
     unit[j] = 1;
-    backSubstitute(a, diagonal, unit).forEach((value, i) => {
-      squares[i]! += value * value;
-    });
-  }
-  return Array.from(squares, Math.sqrt);
+    return backSubstitute(a, diagonal, unit);
+  });
+  return columns.map((_, i) => Float64Array.from(columns, (column) => column[i]!));
+}
+
+const product = (a: Float64Array, b: Float64Array): number =>
+  a.reduce((sum, value, i) => sum + value * b[i]!, 0);
+
+/** Euclidean length, scaled by the largest value so that no square leaves the range of doubles. */
+function norm(values: ArrayLike<number>): number {
+  let largest = 0;
+  for (let i = 0; i < values.length; i += 1) largest = Math.max(largest, Math.abs(values[i]!));
+  if (largest === 0) return 0;
+  let sum = 0;
+  for (let i = 0; i < values.length; i += 1) sum += (values[i]! / largest) ** 2;
+  return largest * Math.sqrt(sum);
 }

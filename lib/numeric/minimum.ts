@@ -14,10 +14,14 @@ export interface MinimumOptions {
 
 const golden = (3 - Math.sqrt(5)) / 2;
 
+/** Values that differ by rounding only count as equal, so that of equal minima the smallest x is answered. */
+const equalTo = (least: number): number => least + 4 * Number.EPSILON * Math.abs(least);
+
 /**
- * Smallest value of f on [lo, hi]: a scan finds every valley that its steps can see, Brent's minimiser (parabolic steps
- * with golden sections, Brent 1973, ch. 5) refines each, and both ends take part. Of equal minima the smallest x.
- * Throws NumericFault `not-finite` when f is NaN or infinite at a point of the scan.
+ * Smallest value of f on [lo, hi], lo ≤ hi: a scan finds every valley that its steps can see, Brent's minimiser (parabolic
+ * steps with golden sections, Brent 1973, ch. 5) refines each, and both ends take part. Of equal minima the smallest x; of
+ * a level stretch its left end. x is known to about 1e-8 of itself, as far as values near a minimum can tell.
+ * A value of +∞ is no minimum. Throws NumericFault `not-finite` where f is NaN or −∞, or nowhere finite.
  */
 export function globalMinimum(
   f: (x: number) => number,
@@ -26,42 +30,67 @@ export function globalMinimum(
   options: MinimumOptions = {},
 ): Minimum {
   const { points = 129, relTol = 1e-10 } = options;
-  if (lo === hi) return { x: lo, fx: judged(f, lo) };
-  const xs = Array.from({ length: points }, (_, index) =>
-    index === points - 1 ? hi : lo + ((hi - lo) * index) / (points - 1),
+  if (lo === hi) return finite({ x: lo, fx: judged(f, lo) });
+  const xs = Float64Array.from({ length: points }, (_, index) =>
+    index === points - 1 ? hi : lo + (hi - lo) * (index / (points - 1)),
   );
   const fs = xs.map((x) => judged(f, x));
-  const candidates: Minimum[] = [
-    { x: lo, fx: fs[0] as number },
-    { x: hi, fx: fs[points - 1] as number },
-  ];
+  const candidates: Minimum[] = [];
   for (let index = 0; index < points; index += 1) {
-    const here = fs[index] as number;
-    const before = index === 0 ? here : (fs[index - 1] as number);
-    const after = index === points - 1 ? here : (fs[index + 1] as number);
-    if (here > before || here > after || (here === before && here === after)) continue;
-    candidates.push(
-      valley(
-        f,
-        xs[Math.max(0, index - 1)] as number,
-        xs[Math.min(points - 1, index + 1)] as number,
-        relTol * (hi - lo),
-      ),
-    );
-    candidates.push({ x: xs[index] as number, fx: here });
+    const here = fs[index]!;
+    const before = index === 0 ? Infinity : fs[index - 1]!;
+    const after = index === points - 1 ? Infinity : fs[index + 1]!;
+    if (here > before || here > after || here === Infinity) continue;
+    candidates.push({ x: xs[index]!, fx: here });
+    // Inside a level stretch there is no valley to go down.
+    if (here === before && here === after) continue;
+    const from = xs[Math.max(0, index - 1)]!;
+    const to = xs[Math.min(points - 1, index + 1)]!;
+    candidates.push(valley(f, from, to, relTol * (hi - lo)));
   }
-  // Values that differ by rounding only count as equal, so that the smallest x of a flat stretch is answered.
-  const least = Math.min(...candidates.map((candidate) => candidate.fx));
-  const equal = candidates.filter(
-    (candidate) => candidate.fx - least <= 4 * Number.EPSILON * Math.abs(least),
+  const limit = equalTo(candidates.reduce((least, { fx }) => Math.min(least, fx), Infinity));
+  const best = candidates.reduce<Minimum>(
+    (found, candidate) => (candidate.fx <= limit && candidate.x < found.x ? candidate : found),
+    { x: Infinity, fx: Infinity },
   );
-  return equal.reduce((best, candidate) => (candidate.x < best.x ? candidate : best));
+  return leftEnd(f, xs, fs, finite(best), limit);
+}
+
+/** Left end of the level stretch that x lies in; x itself where the function rises on its left. */
+function leftEnd(
+  f: (x: number) => number,
+  xs: Float64Array,
+  fs: Float64Array,
+  best: Minimum,
+  limit: number,
+): Minimum {
+  const lo = xs[0]!;
+  const near = best.x - 1e-4 * (xs[1]! - lo);
+  if (!(near > lo) || judged(f, near) > limit) return best;
+  let outside = lo;
+  xs.forEach((x, index) => {
+    if (x < near && fs[index]! > limit) outside = x;
+  });
+  let inside = near;
+  for (let step = 0; step < 200; step += 1) {
+    const middle = outside + 0.5 * (inside - outside);
+    if (middle <= outside || middle >= inside) break;
+    if (judged(f, middle) <= limit) inside = middle;
+    else outside = middle;
+  }
+  return { x: inside, fx: judged(f, inside) };
+}
+
+function finite(minimum: Minimum): Minimum {
+  if (minimum.fx === Infinity)
+    throw new NumericFault("not-finite", "The value is finite nowhere in the interval.", {});
+  return minimum;
 }
 
 function judged(f: (x: number) => number, x: number): number {
   const value = f(x);
-  if (!Number.isFinite(value))
-    throw new NumericFault("not-finite", `The value at ${x} is not finite.`, { x });
+  if (!(value > -Infinity))
+    throw new NumericFault("not-finite", `The value at ${x} is ${value}, so there is no minimum.`, { x });
   return value;
 }
 

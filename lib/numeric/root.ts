@@ -3,59 +3,77 @@ import { NumericFault } from "./fault";
 export interface Root {
   readonly x: number;
   readonly fx: number;
+  /** Steps taken, each one evaluation. */
   readonly iterations: number;
 }
 
 export interface RootOptions {
-  /** Width of the last bracket relative to x; below 4 ulp it has no effect. */
+  /** Width of the last bracket relative to x; by default, and at least, a few units in the last place. */
   readonly relTol?: number;
   readonly absTol?: number;
   readonly maxIterations?: number;
 }
 
+/** A zero nearer to 0 than this part of the interval's larger end is 0: bisection does not go on to the denormals. */
+const negligible = 1e-40;
+/** Residuals below this part of the larger end need no proof that they belong to a zero. */
+const clearZero = 1e-9;
+/** Distance, in final brackets, at which a zero, a jump and a pole are told apart. */
+const probeReach = 1e8;
+/** Growth of |f| over that distance that makes a zero, and its reciprocal a pole; between them it is a jump. */
+const probeGrowth = 1.5;
+
 /**
- * Zero of f in [lo, hi] by Brent's method (R. P. Brent, Algorithms for Minimization without Derivatives, 1973, ch. 4):
- * inverse quadratic interpolation and secant steps, kept within a bracket by bisection. An end that is exactly zero is
- * the answer. A change of sign through a pole is told from a zero: |f| at the end of the search is then larger than at
- * the ends of the interval. Throws NumericFault `no-sign-change`, `pole`, `not-finite`, `not-converged`.
+ * Zero of f in [lo, hi], lo ≤ hi, by Brent's method (R. P. Brent, Algorithms for Minimization without Derivatives, 1973,
+ * ch. 4): inverse quadratic interpolation and secant steps, kept within a bracket by bisection, down to a few units in the
+ * last place. An end that is exactly zero is the answer; an infinite value counts by its sign.
+ * Throws NumericFault `no-sign-change` (with lo, hi, atLo, atHi), `pole` when the sign changes where |f| grows without
+ * bound, `not-converged` when it changes by a jump or the steps run out, `not-finite` when f is not a number.
  */
 export function brent(f: (x: number) => number, lo: number, hi: number, options: RootOptions = {}): Root {
-  const { relTol = 0, absTol = 0, maxIterations = 300 } = options;
-  let a = lo;
-  let b = hi;
-  let fa = f(a);
-  if (fa === 0) return { x: a, fx: 0, iterations: 0 };
-  let fb = f(b);
-  if (fb === 0) return { x: b, fx: 0, iterations: 0 };
-  if (Number.isNaN(fa) || Number.isNaN(fb)) throw notFinite(Number.isNaN(fa) ? a : b);
-  if (fa > 0 === fb > 0) {
-    throw new NumericFault("no-sign-change", `The values at ${lo} and ${hi} have the same sign.`, {
-      lo,
-      hi,
-      atLo: fa,
-      atHi: fb,
-    });
+  const { relTol = 0, absTol = 0, maxIterations = 2500 } = options;
+  const atLo = judged(f, lo);
+  if (atLo === 0) return { x: lo, fx: 0, iterations: 0 };
+  const atHi = judged(f, hi);
+  if (atHi === 0) return { x: hi, fx: 0, iterations: 0 };
+  if (atLo > 0 === atHi > 0) {
+    throw new NumericFault(
+      "no-sign-change",
+      `The values at both ends have the same sign: ${atLo} at ${lo} and ${atHi} at ${hi}.`,
+      { lo, hi, atLo, atHi },
+    );
   }
-  const largest = Math.max(Math.abs(fa), Math.abs(fb));
-  let c = a;
-  let fc = fa;
-  let d = b - a;
-  let e = d;
+  // b is the best point, a the one before it, c the other end of the bracket.
+  let a = lo;
+  let fa = atLo;
+  let b = hi;
+  let fb = atHi;
+  let c = lo;
+  let fc = atLo;
+  let step = b - a;
+  let before = step;
+  const floor = negligible * Math.max(Math.abs(lo), Math.abs(hi)) + 0.5 * absTol + Number.MIN_VALUE;
   for (let iteration = 1; iteration <= maxIterations; iteration += 1) {
     if (Math.abs(fc) < Math.abs(fb)) {
-      [a, b, c] = [b, c, b];
-      [fa, fb, fc] = [fb, fc, fb];
+      a = b;
+      fa = fb;
+      b = c;
+      fb = fc;
+      c = a;
+      fc = fa;
     }
-    const tolerance =
-      2 * Number.EPSILON * Math.abs(b) + 0.5 * (absTol + relTol * Math.abs(b)) + Number.MIN_VALUE;
-    const half = 0.5 * (c - b);
-    if (Math.abs(half) <= tolerance || fb === 0) {
-      if (Math.abs(fb) > largest && Math.abs(fb) > 1e3 * Number.MIN_VALUE) {
-        throw new NumericFault("pole", `The sign changes through a pole near ${b}.`, { x: b, fx: fb });
-      }
-      return { x: b, fx: fb, iterations: iteration };
+    const tolerance = (2 * Number.EPSILON + 0.5 * relTol) * Math.abs(b) + floor;
+    const half = 0.5 * c - 0.5 * b;
+    if (fb === 0) return { x: b, fx: 0, iterations: iteration - 1 };
+    if (Math.abs(half) <= tolerance) {
+      if (!(Math.abs(fb) <= clearZero * largestFinite(atLo, atHi)))
+        requireZero(f, lo, hi, b, Math.abs(fb), tolerance);
+      return { x: b, fx: fb, iterations: iteration - 1 };
     }
-    if (Math.abs(e) >= tolerance && Math.abs(fa) > Math.abs(fb)) {
+    // An infinite value has no slope to follow.
+    const smooth = Math.abs(fa) < Infinity && Math.abs(fc) < Infinity;
+    let next = half;
+    if (smooth && Math.abs(before) >= tolerance && Math.abs(fa) > Math.abs(fb)) {
       const s = fb / fa;
       let p: number;
       let q: number;
@@ -70,35 +88,63 @@ export function brent(f: (x: number) => number, lo: number, hi: number, options:
       }
       if (p > 0) q = -q;
       else p = -p;
-      if (2 * p < Math.min(3 * half * q - Math.abs(tolerance * q), Math.abs(e * q))) {
-        e = d;
-        d = p / q;
-      } else {
-        d = half;
-        e = half;
-      }
-    } else {
-      d = half;
-      e = half;
+      if (2 * p < Math.min(3 * half * q - Math.abs(tolerance * q), Math.abs(before * q))) next = p / q;
     }
+    before = next === half ? half : step;
+    step = next;
     a = b;
     fa = fb;
-    b += Math.abs(d) > tolerance ? d : half > 0 ? tolerance : -tolerance;
-    fb = f(b);
-    if (Number.isNaN(fb)) throw notFinite(b);
+    b += Math.abs(step) > tolerance ? step : half > 0 ? tolerance : -tolerance;
+    fb = judged(f, b);
     if (fb > 0 === fc > 0) {
       c = a;
       fc = fa;
-      d = b - a;
-      e = d;
+      step = b - a;
+      before = step;
     }
   }
-  throw new NumericFault("not-converged", `No zero was found within ${maxIterations} steps.`, {
-    x: b,
-    fx: fb,
-  });
+  throw new NumericFault(
+    "not-converged",
+    `No zero was found within ${maxIterations} steps; the last value is ${fb} at ${b}.`,
+    { x: b, fx: fb },
+  );
 }
 
-function notFinite(x: number): NumericFault {
-  return new NumericFault("not-finite", `The value at ${x} is not a number.`, { x });
+/**
+ * A bracket has closed on x with a residual that is not small. Going away from a zero |f| rises, from a jump it stays,
+ * from a pole it falls.
+ */
+function requireZero(
+  f: (x: number) => number,
+  lo: number,
+  hi: number,
+  x: number,
+  residual: number,
+  tolerance: number,
+): void {
+  const reach = Math.min(probeReach * tolerance, 0.5 * hi - 0.5 * lo);
+  // One of the two lies within the interval; the other says nothing where it does not.
+  const left = x - reach >= lo ? Math.abs(judged(f, x - reach)) : Infinity;
+  const right = x + reach <= hi ? Math.abs(judged(f, x + reach)) : Infinity;
+  const away = Math.min(left, right);
+  if (residual === Infinity || away * probeGrowth < residual)
+    throw new NumericFault("pole", `The sign changes through a pole near ${x}.`, { x });
+  if (away < residual * probeGrowth)
+    throw new NumericFault("not-converged", `The value jumps over zero near ${x} without meeting it.`, {
+      x,
+      residual,
+    });
+}
+
+/** The larger of two sizes; 0 where both are infinite. */
+function largestFinite(a: number, b: number): number {
+  const left = Math.abs(a);
+  const right = Math.abs(b);
+  return Math.max(left < Infinity ? left : 0, right < Infinity ? right : 0);
+}
+
+function judged(f: (x: number) => number, x: number): number {
+  const value = f(x);
+  if (value !== value) throw new NumericFault("not-finite", `The value at ${x} is not a number.`, { x });
+  return value;
 }

@@ -15,7 +15,6 @@ import {
   scaledI,
   scaledK,
   series,
-  twoOverRootPi,
 } from "./high-precision";
 
 interface Table {

@@ -24,7 +24,7 @@ type Order = 0 | 1;
 const seriesEnd = fromRatio(60);
 const euler = eulerConstant();
 export const ln2: Fixed = logarithm(fromRatio(2));
-export const twoOverRootPi: Fixed = divide(fromRatio(2), squareRoot(pi));
+const twoOverRootPi: Fixed = divide(fromRatio(2), squareRoot(pi));
 
 /** Σ (±t)^k/(k!·(k+n)!) with t = (x/2)²: I_n or J_n over (x/2)^n (DLMF 10.25.2, 10.2.2). */
 export function series(order: Order, t: Fixed, sign: 1n | -1n): Fixed {
