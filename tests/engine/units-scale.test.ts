@@ -82,3 +82,21 @@ describe("conversion keeps what was typed", () => {
     expect(unit("W·s^(1/2)/(cm²·K)").factor).toBe(1e4);
   });
 });
+
+describe("temperatures to the last digit", () => {
+  const pairs = [
+    [302, 150],
+    [140, 60],
+    [212, 100],
+    [-40, -40],
+    [68, 20],
+  ] as const;
+
+  it.each(pairs)("reads %d °F as the same double as %d °C", (fahrenheit, celsius) => {
+    const f = parseUnit("°F");
+    const c = parseUnit("°C");
+    if (!f.ok || !c.ok) throw new Error("°F and °C are read");
+    expect(toSi(fahrenheit, f.value, "absolute")).toBe(toSi(celsius, c.value, "absolute"));
+    expect(fromSi(toSi(fahrenheit, f.value, "absolute"), c.value, "absolute")).toBe(celsius);
+  });
+});
