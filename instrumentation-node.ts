@@ -1,6 +1,7 @@
 import { prepareConnections } from "./db/client";
 import { appliedMigration, newestMigration } from "./db/migrate";
 import { boundHost, isDemoDatabase, refuseExposedDemo } from "./lib/access/installation";
+import { compute } from "./lib/compute/compute";
 import { env } from "./lib/core/env";
 import { log } from "./lib/core/log";
 import { needsFirstPerson, setUpCode } from "./lib/people/set-up-first-person";
@@ -25,6 +26,7 @@ export async function start(): Promise<void> {
         message: `Open ${settings.PUBLIC_URL}/set-up, set-up code ${setUpCode()}`,
       });
     }
+    await compute.warm();
     startUsageFlush();
     for (const signal of ["SIGTERM", "SIGINT"] as const) process.once(signal, () => void lastFlush());
     log.info("started", { publicUrl: settings.PUBLIC_URL });

@@ -143,6 +143,11 @@ export class Compute {
     return CodedError.from([{ pointer: "#/inputs", code: "budget-exceeded", message, limit }]);
   }
 
+  /** Starts the first worker thread ahead of the first run. */
+  warm(): Promise<void> {
+    return this.pool.warm();
+  }
+
   /** Ends the worker threads; they begin again with the next run. */
   close(): Promise<void> {
     return this.pool.close();

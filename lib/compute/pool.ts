@@ -52,6 +52,11 @@ function reasonOf(error: unknown, outcome: "running" | "too-long" | "never-began
 export class Pool {
   private pool: Promise<Piscina<Task, Answer<unknown>>> | null = null;
 
+  /** Starts the first thread, so that no caller waits for it. Throws when the bundle of the worker is missing. */
+  async warm(): Promise<void> {
+    await this.open();
+  }
+
   private open(): Promise<Piscina<Task, Answer<unknown>>> {
     this.pool ??= this.start();
     return this.pool;
