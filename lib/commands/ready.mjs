@@ -9,5 +9,7 @@ secrets();
 process.env.NODE_ENV = "production";
 build();
 if (!chromium({ mayInstall: true })) {
-  say("No Chromium was found: the browser tests will fail. Install one (Debian: apt-get install chromium) or set CHROMIUM_PATH.");
+  say(
+    "No Chromium was found: the browser tests will fail. Install one (Debian: apt-get install chromium) or set CHROMIUM_PATH.",
+  );
 }

@@ -23,7 +23,8 @@ export function stop(text) {
 
 export function checkNode() {
   const [major, minor] = process.versions.node.split(".").map(Number);
-  if (major < 20 || (major === 20 && minor < 12)) stop(`Coldface needs Node.js 20.12 or newer; this is ${process.versions.node}.`);
+  if (major < 20 || (major === 20 && minor < 12))
+    stop(`Coldface needs Node.js 20.12 or newer; this is ${process.versions.node}.`);
 }
 
 function sha256(file) {
@@ -49,7 +50,9 @@ export function install() {
   if (existsSync(stamp) && readFileSync(stamp, "utf8") === wanted) return;
   say("Installing packages …");
   if (!npm(["ci", "--include=dev", "--no-audit", "--no-fund"])) {
-    stop("The packages could not be installed. Is the npm registry reachable? The lines above say what npm missed.");
+    stop(
+      "The packages could not be installed. Is the npm registry reachable? The lines above say what npm missed.",
+    );
   }
   writeFileSync(stamp, wanted);
 }
@@ -58,7 +61,9 @@ export function install() {
 export function secrets() {
   const file = at(".env.local");
   const present = existsSync(file) ? readFileSync(file, "utf8") : "";
-  const missing = ["AUTH_SECRET", "KEY_SECRET", "AUDIT_SECRET"].filter((name) => !new RegExp(`^${name}=`, "m").test(present));
+  const missing = ["AUTH_SECRET", "KEY_SECRET", "AUDIT_SECRET"].filter(
+    (name) => !new RegExp(`^${name}=`, "m").test(present),
+  );
   if (missing.length === 0) return;
   const lines = missing.map((name) => `${name}=${randomBytes(32).toString("base64url")}`);
   const glue = present === "" || present.endsWith("\n") ? "" : "\n";
@@ -76,7 +81,21 @@ export function loadSettings() {
   }
 }
 
-const sources = ["app", "db", "lib", "openapi", "public", "next.config.ts", "proxy.ts", "instrumentation.ts", "instrumentation-node.ts", "tailwind.config.ts", "postcss.config.mjs", "tsconfig.json", "package-lock.json"];
+const sources = [
+  "app",
+  "db",
+  "lib",
+  "openapi",
+  "public",
+  "next.config.ts",
+  "proxy.ts",
+  "instrumentation.ts",
+  "instrumentation-node.ts",
+  "tailwind.config.ts",
+  "postcss.config.mjs",
+  "tsconfig.json",
+  "package-lock.json",
+];
 
 function fingerprint() {
   const hash = createHash("sha256");
@@ -94,7 +113,11 @@ function fingerprint() {
 }
 
 function run(file, args, failure) {
-  const result = spawnSync(process.execPath, [file, ...args], { cwd: root, stdio: ["ignore", "inherit", "inherit"], env: process.env });
+  const result = spawnSync(process.execPath, [file, ...args], {
+    cwd: root,
+    stdio: ["ignore", "inherit", "inherit"],
+    env: process.env,
+  });
   if (result.status !== 0) stop(failure);
 }
 
@@ -102,16 +125,29 @@ function run(file, args, failure) {
 export function build() {
   const stamp = at(".next", ".coldface-sources");
   const wanted = fingerprint();
-  if (existsSync(stamp) && readFileSync(stamp, "utf8") === wanted && existsSync(at(".next", "BUILD_ID"))) return;
+  if (existsSync(stamp) && readFileSync(stamp, "utf8") === wanted && existsSync(at(".next", "BUILD_ID")))
+    return;
   say("Building …");
-  run(at("lib", "compute", "build-worker.mjs"), [], "The calculation worker could not be built; the lines above say why.");
-  run(at("node_modules", "next", "dist", "bin", "next"), ["build"], "The application could not be built; the lines above say why.");
+  run(
+    at("lib", "compute", "build-worker.mjs"),
+    [],
+    "The calculation worker could not be built; the lines above say why.",
+  );
+  run(
+    at("node_modules", "next", "dist", "bin", "next"),
+    ["build"],
+    "The application could not be built; the lines above say why.",
+  );
   writeFileSync(stamp, wanted);
 }
 
 /** Runs one of the TypeScript commands of this folder, as server code (`server-only` refuses to load otherwise). */
 export function command(name, args = []) {
-  run(at("node_modules", "tsx", "dist", "cli.mjs"), ["--conditions=react-server", at("lib", "commands", `${name}.ts`), ...args], `The step "${name}" failed; the lines above say why.`);
+  run(
+    at("node_modules", "tsx", "dist", "cli.mjs"),
+    ["--conditions=react-server", at("lib", "commands", `${name}.ts`), ...args],
+    `The step "${name}" failed; the lines above say why.`,
+  );
 }
 
 export function dataFolder() {
@@ -120,13 +156,27 @@ export function dataFolder() {
 
 /** Path of a Chromium for the browser tests, or null. Installs Debian's when this process may. */
 export function chromium({ mayInstall }) {
-  const known = [process.env.CHROMIUM_PATH, "/usr/bin/chromium", "/usr/bin/chromium-browser", "/usr/bin/google-chrome"];
+  const known = [
+    process.env.CHROMIUM_PATH,
+    "/usr/bin/chromium",
+    "/usr/bin/chromium-browser",
+    "/usr/bin/google-chrome",
+  ];
   const found = known.find((file) => file && existsSync(file));
   if (found) return found;
-  if (!mayInstall || process.platform !== "linux" || process.getuid?.() !== 0 || !existsSync("/usr/bin/apt-get")) return null;
+  if (
+    !mayInstall ||
+    process.platform !== "linux" ||
+    process.getuid?.() !== 0 ||
+    !existsSync("/usr/bin/apt-get")
+  )
+    return null;
   say("Installing Chromium from Debian's packages for the browser tests …");
   try {
-    const options = { stdio: ["ignore", "ignore", "inherit"], env: { ...process.env, DEBIAN_FRONTEND: "noninteractive" } };
+    const options = {
+      stdio: ["ignore", "ignore", "inherit"],
+      env: { ...process.env, DEBIAN_FRONTEND: "noninteractive" },
+    };
     execFileSync("apt-get", ["update", "-q"], options);
     execFileSync("apt-get", ["install", "-q", "-y", "--no-install-recommends", "chromium"], options);
   } catch (error) {

@@ -4,7 +4,18 @@
  */
 import { spawn } from "node:child_process";
 import path from "node:path";
-import { build, checkNode, command, dataFolder, install, loadSettings, root, say, secrets, stop } from "./steps.mjs";
+import {
+  build,
+  checkNode,
+  command,
+  dataFolder,
+  install,
+  loadSettings,
+  root,
+  say,
+  secrets,
+  stop,
+} from "./steps.mjs";
 
 process.env.NEXT_TELEMETRY_DISABLED = "1";
 process.chdir(root);
@@ -34,7 +45,9 @@ const server = spawn(process.execPath, [next, "start", "--hostname", host, "--po
   env: process.env,
 });
 server.on("error", (error) => stop(`The server could not be started: ${error.message}`));
-server.on("exit", (code, signal) => process.exit(code ?? (signal === "SIGTERM" || signal === "SIGINT" ? 0 : 1)));
+server.on("exit", (code, signal) =>
+  process.exit(code ?? (signal === "SIGTERM" || signal === "SIGINT" ? 0 : 1)),
+);
 
 const end = () => server.kill("SIGTERM");
 process.on("SIGINT", end);
