@@ -12,3 +12,8 @@ export class NumericFault extends Error {
     this.details = details;
   }
 }
+
+/** A number of a message, to six digits; `details` holds it in full. */
+export function inWords(value: number): string {
+  return String(Number(value.toPrecision(6)));
+}

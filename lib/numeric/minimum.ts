@@ -1,4 +1,4 @@
-import { NumericFault } from "./fault";
+import { inWords, NumericFault } from "./fault";
 
 export interface Minimum {
   readonly x: number;
@@ -90,7 +90,11 @@ function finite(minimum: Minimum): Minimum {
 function judged(f: (x: number) => number, x: number): number {
   const value = f(x);
   if (!(value > -Infinity))
-    throw new NumericFault("not-finite", `The value at ${x} is ${value}, so there is no minimum.`, { x });
+    throw new NumericFault(
+      "not-finite",
+      `The value at ${inWords(x)} is ${inWords(value)}, so there is no minimum.`,
+      { x },
+    );
   return value;
 }
 

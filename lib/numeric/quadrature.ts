@@ -1,4 +1,4 @@
-import { NumericFault } from "./fault";
+import { inWords, NumericFault } from "./fault";
 
 export interface Quadrature {
   readonly value: number;
@@ -63,11 +63,15 @@ function panel(f: (x: number) => number, from: number, to: number): Panel {
     if (index % 2 === 1) g += gauss[(index - 1) / 2]! * (left + right);
     if (left !== atCentre || right !== atCentre) level = false;
   }
-  if (!Number.isFinite(k) || !Number.isFinite(half))
-    throw new NumericFault("not-finite", `The integrand is not finite between ${from} and ${to}.`, {
-      from,
-      to,
-    });
+  if (!Number.isFinite(k * half))
+    throw new NumericFault(
+      "not-finite",
+      `The integrand is not finite between ${inWords(from)} and ${inWords(to)}.`,
+      {
+        from,
+        to,
+      },
+    );
   return {
     from,
     to,
@@ -121,7 +125,7 @@ export function integrate(
     if (evaluations + 30 > maxEvaluations || middle === from || middle === to) {
       throw new NumericFault(
         "not-converged",
-        `After ${evaluations} evaluations the integral ${value} is known to ±${error} only; the trouble is near ${middle}.`,
+        `After ${evaluations} evaluations the integral ${inWords(value)} is known to ±${inWords(error)} only; the trouble is near ${inWords(middle)}.`,
         { value, error, x: middle },
       );
     }

@@ -1,4 +1,4 @@
-import { NumericFault } from "./fault";
+import { inWords, NumericFault } from "./fault";
 
 export interface Root {
   readonly x: number;
@@ -39,7 +39,7 @@ export function brent(f: (x: number) => number, lo: number, hi: number, options:
   if (atLo > 0 === atHi > 0) {
     throw new NumericFault(
       "no-sign-change",
-      `The values at both ends have the same sign: ${atLo} at ${lo} and ${atHi} at ${hi}.`,
+      `The values at both ends have the same sign: ${inWords(atLo)} at ${inWords(lo)} and ${inWords(atHi)} at ${inWords(hi)}.`,
       { lo, hi, atLo, atHi },
     );
   }
@@ -105,7 +105,7 @@ export function brent(f: (x: number) => number, lo: number, hi: number, options:
   }
   throw new NumericFault(
     "not-converged",
-    `No zero was found within ${maxIterations} steps; the last value is ${fb} at ${b}.`,
+    `No zero was found within ${maxIterations} steps; the last value is ${inWords(fb)} at ${inWords(b)}.`,
     { x: b, fx: fb },
   );
 }
@@ -128,12 +128,16 @@ function requireZero(
   const right = x + reach <= hi ? Math.abs(judged(f, x + reach)) : Infinity;
   const away = Math.min(left, right);
   if (residual === Infinity || away * probeGrowth < residual)
-    throw new NumericFault("pole", `The sign changes through a pole near ${x}.`, { x });
+    throw new NumericFault("pole", `The sign changes through a pole near ${inWords(x)}.`, { x });
   if (away < residual * probeGrowth)
-    throw new NumericFault("not-converged", `The value jumps over zero near ${x} without meeting it.`, {
-      x,
-      residual,
-    });
+    throw new NumericFault(
+      "not-converged",
+      `The value jumps over zero near ${inWords(x)} without meeting it.`,
+      {
+        x,
+        residual,
+      },
+    );
 }
 
 /** The larger of two sizes; 0 where both are infinite. */
@@ -145,6 +149,7 @@ function largestFinite(a: number, b: number): number {
 
 function judged(f: (x: number) => number, x: number): number {
   const value = f(x);
-  if (value !== value) throw new NumericFault("not-finite", `The value at ${x} is not a number.`, { x });
+  if (value !== value)
+    throw new NumericFault("not-finite", `The value at ${inWords(x)} is not a number.`, { x });
   return value;
 }
