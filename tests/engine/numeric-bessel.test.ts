@@ -90,6 +90,36 @@ describe("modified Bessel functions", () => {
     expect([besselI(1, 1e-320), besselI(0, 1e-320), besselI(2, 1e-320)]).toEqual([5e-321, 1, 0]);
   });
 
+  it("reach to where I overflows and K vanishes themselves, not only e^x", () => {
+    // mpmath, 40 digits.
+    expect(relative(besselI(0, 712), 2.4684110577627523e307)).toBeLessThan(2e-15);
+    expect(relative(besselK(0, 705), 3.135297023712879e-308)).toBeLessThan(2e-15);
+  });
+
+  it("give an annular fin of any size an efficiency between 0 and 1", () => {
+    fc.assert(
+      fc.property(
+        fc.double({ min: -6, max: 8, noNaN: true }).map((power) => 10 ** power),
+        fc.double({ min: 1.01, max: 50, noNaN: true }),
+        (inner, ratio) => {
+          const outer = inner * ratio;
+          const decay = Math.exp(2 * (inner - outer));
+          const up =
+            besselKScaled(1, inner) * besselIScaled(1, outer) -
+            besselIScaled(1, inner) * besselKScaled(1, outer) * decay;
+          const down =
+            besselKScaled(0, inner) * besselIScaled(1, outer) +
+            besselIScaled(0, inner) * besselKScaled(1, outer) * decay;
+          const efficiency = (2 * inner * (up / down)) / ((outer - inner) * (outer + inner));
+          expect(efficiency).toBeGreaterThan(0);
+          // The difference in `up` leaves about 1/(ratio² − 1) roundings of a short fin.
+          expect(efficiency).toBeLessThan(1 + 1e-13);
+        },
+      ),
+      { numRuns: 500 },
+    );
+  });
+
   it("continue I to negative x by parity and leave K undefined there", () => {
     fc.assert(
       fc.property(order, argument, (n, x) => {

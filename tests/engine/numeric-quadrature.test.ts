@@ -118,5 +118,6 @@ describe("integrate", () => {
     expect(() => integrate((x) => Math.sqrt(x - 0.5), 0, 1)).toThrow(refused);
     expect(() => integrate((x) => Math.exp(-x), 0, Infinity)).toThrow(refused);
     expect(() => integrate((x) => 1 / x, -1, 1)).toThrow(refused);
+    expect(() => integrate(() => 1e300, 0, 1e300)).toThrow(refused);
   });
 });
