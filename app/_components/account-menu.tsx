@@ -1,5 +1,6 @@
 "use client";
 
+import { UserRound } from "lucide-react";
 import { DropdownMenu } from "radix-ui";
 import { signOut } from "next-auth/react";
 
@@ -24,10 +25,11 @@ export function AccountMenu({ name, email, role }: AccountMenuProps) {
   return (
     <DropdownMenu.Root modal={false}>
       <DropdownMenu.Trigger
-        className="min-h-8 whitespace-nowrap rounded px-1 text-muted hover:text-ink max-md:min-h-11"
-        aria-label={`Account of ${name}`}
+        className="inline-flex min-h-8 items-center justify-center whitespace-nowrap rounded px-1 text-muted hover:text-ink max-md:size-11"
+        aria-label={`Account of ${name}, ${role}`}
       >
-        {role}
+        <UserRound size={18} aria-hidden="true" className="md:hidden" />
+        <span className="max-md:hidden">{role}</span>
       </DropdownMenu.Trigger>
       <DropdownMenu.Portal>
         <DropdownMenu.Content
@@ -38,6 +40,7 @@ export function AccountMenu({ name, email, role }: AccountMenuProps) {
           <div className="border-b border-soft px-3 pb-2 pt-1.5">
             <p className="font-[620]">{name}</p>
             <p className="break-all text-[13px] text-muted">{email}</p>
+            <p className="text-[13px] text-muted md:hidden">{role}</p>
           </div>
           <DropdownMenu.Label className="px-3 pb-1 pt-2 text-[11px] text-muted">Colours</DropdownMenu.Label>
           <DropdownMenu.Item className={item} onSelect={() => chooseScheme("light")}>

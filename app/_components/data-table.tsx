@@ -46,7 +46,7 @@ export function DataTable<Row>({ caption, columns, rows, keyOf, next }: DataTabl
                 {columns.map((column) => (
                   <td
                     key={column.head}
-                    className={`px-3 py-2.5 align-top first:pl-6 last:pr-6 max-md:first:pl-4 max-md:last:pr-4 ${look(column)}`}
+                    className={`px-3 py-2.5 align-top first:pl-6 last:pr-6 max-md:first:pl-4 max-md:last:pr-4 max-md:[&>a]:min-h-11 ${look(column)}`}
                   >
                     {column.cell(row)}
                   </td>

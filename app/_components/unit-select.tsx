@@ -15,7 +15,7 @@ export function UnitSelect({ value, units, label, onPick, className = "" }: Unit
         value={value}
         onChange={(event) => onPick(event.target.value)}
         aria-label={label}
-        className="h-full min-h-6 w-full min-w-0 appearance-none [field-sizing:content] rounded bg-transparent pr-3 text-muted group-hover:text-ink max-md:min-h-11"
+        className="h-full min-h-6 w-full min-w-0 appearance-none [field-sizing:content] rounded bg-transparent pr-3 text-muted group-hover:text-ink max-md:min-h-11 max-md:min-w-11"
       >
         {offered.map((unit) => (
           <option key={unit} value={unit} className="bg-sheet text-ink">

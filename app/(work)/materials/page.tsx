@@ -85,16 +85,16 @@ const columns = [
     cell: (row: MaterialItem) => (
       <ul className="text-[13px]">
         {Object.entries(row.properties).map(([name, range]) => (
-          <li key={name} className="whitespace-nowrap">
+          <li key={name} className="md:whitespace-nowrap">
             <span title={propertyLabels[name]}>
               <SymbolText symbol={name} />
               <span className="sr-only">{propertyLabels[name]}</span>
             </span>{" "}
-            <span className="num ml-1">
+            <span className="num ml-1 whitespace-nowrap">
               {short(range.min)} to {short(range.max)}
             </span>{" "}
             <span className="text-muted">{range.argumentUnit}</span>
-            <span className="ml-2 text-muted">{range.basis}</span>
+            <span className="text-muted max-md:block md:ml-2">{range.basis}</span>
           </li>
         ))}
       </ul>

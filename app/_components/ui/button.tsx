@@ -46,7 +46,7 @@ export function TextButton({
   return (
     <button
       type={type}
-      className={`min-h-6 text-[13px] underline decoration-rule underline-offset-[3px] hover:decoration-ink disabled:text-muted max-md:min-h-11 ${className}`}
+      className={`min-h-6 text-[13px] underline decoration-rule underline-offset-[3px] hover:decoration-ink disabled:text-muted max-md:min-h-11 max-md:min-w-11 ${className}`}
       {...rest}
     />
   );

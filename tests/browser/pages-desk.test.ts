@@ -1,0 +1,4 @@
+import { desk } from "./browser";
+import { describePages } from "./pages";
+
+describePages(desk);

@@ -1,0 +1,4 @@
+import { phone } from "./browser";
+import { describePages } from "./pages";
+
+describePages(phone, 360);
