@@ -155,9 +155,12 @@ function explained(
   line: number | null,
 ): unknown {
   if (!(error instanceof RunFault) || error.symbol !== null) return error;
-  if (error.code === "not-finite" && line !== -1) {
+  // Lines are judged together, so an earlier one may be the true beginning of this fault.
+  const earlier = line === null ? -1 : unfinishedBefore(frame, line);
+  const suspect = earlier >= 0 ? earlier : error.code === "not-finite" && line !== -1 ? place : null;
+  if (suspect !== null) {
     try {
-      findNotFinite(program, frame, place, place);
+      findNotFinite(program, frame, suspect, suspect);
     } catch (better) {
       if (better instanceof RunFault && better.code === "not-finite") return better;
     }
@@ -165,6 +168,15 @@ function explained(
   const named = line === null ? null : linePlace(program, line);
   if (!named) return error;
   return new RunFault(error.code, `${named.text}: ${error.message}`, named, error.details);
+}
+
+/** The first line before `line` whose value in the frame is not finite; −1 when there is none. */
+function unfinishedBefore(frame: Frame, line: number): number {
+  return frame.values
+    .slice(0, Math.max(0, line))
+    .findIndex((value) =>
+      typeof value === "number" ? !Number.isFinite(value) : !value.every(Number.isFinite),
+    );
 }
 
 /** A frame of the right shape. Columns are empty until the caller puts lists of equal length into each table. */

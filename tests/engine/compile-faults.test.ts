@@ -58,6 +58,16 @@ describe("a value that is not finite", () => {
     expect(fault("f(x, z) = z\ny = f(sqrt(2 - a), 1)").code).toBe("not-finite");
   });
 
+  it("is named at its own line, whatever later line stumbles over it", () => {
+    expect(fault("x = ln(-a)\ny = x > 0 ? 1 : 2")).toMatchObject({ symbol: "x", line: 1 });
+    expect(fault("x = ln(-a)\ny = at(rows.n, x)")).toMatchObject({ code: "not-finite", symbol: "x" });
+    expect(fault("x = ln(-a)\ny = series(n, 1, x, n)")).toMatchObject({ code: "not-finite", symbol: "x" });
+    expect(fault("x = ln(-a)\ny = balance(u, 0, 1, u - x)")).toMatchObject({
+      code: "not-finite",
+      symbol: "x",
+    });
+  });
+
   it("is not reported when a sum of large values merely overflows the check", () => {
     expect(program("x = 1e308*a\ny = 1e308*a\nz = x").run({ ...given, a: 1 })).toEqual({
       x: 1e308,

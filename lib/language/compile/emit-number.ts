@@ -253,7 +253,8 @@ function comparison(
   const known = [left, right].every(
     (side) => side.operation.is === "input" || side.operation.is === "constant",
   );
-  const unknown = `N(F, ${numberLiteral(writer.range.to)})`;
+  const { from, to } = writer.range;
+  const unknown = `N(F, ${numberLiteral(from)}, ${numberLiteral(to)})`;
   if (!known) {
     writer.faults++;
     writer.judgements++;

@@ -58,7 +58,7 @@ export function writeProgram(program: TypedProgram): WrittenProgram {
     "let Z = false;",
     "let U = 0;",
     "let A = 0;",
-    "function N(F, A) { if (J) X.notFinite(F, A, A); Z = true; return false; }",
+    "function N(F, r0, r1) { if (J) X.notFinite(F, r0, r1); Z = true; return false; }",
     ...shared.declarations,
     ...functions,
     `const run = ${run};`,
