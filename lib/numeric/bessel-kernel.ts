@@ -49,14 +49,12 @@ function hankel(order: 0 | 1, kind: "j" | "y", x: number): number {
 
 export function j0(x: number): number {
   if (x > 4) return hankel(0, "j", x);
-  const square = x * x;
-  return 1 - 0.25 * square * chebyshev(j0Near, square / 8 - 1);
+  return chebyshev(j0Near, (x * x) / 8 - 1);
 }
 
 export function j1(x: number): number {
   if (x > 4) return hankel(1, "j", x);
-  const square = x * x;
-  return 0.5 * x * (1 - 0.25 * square * chebyshev(j1Near, square / 8 - 1));
+  return 0.5 * x * chebyshev(j1Near, (x * x) / 8 - 1);
 }
 
 export function y0(x: number): number {

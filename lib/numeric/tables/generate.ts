@@ -59,8 +59,8 @@ const square = (v: Fixed): Fixed => v / 4n;
 const reciprocal = (x: number): Fixed => fromRatio(1, x);
 const both = <T>(make: (order: 0 | 1) => T): T[] => [make(0), make(1)];
 
-/** (x/2)^−n·I_n less its value at 0, over t = (x/2)²; with sign −1 that of J_n. */
-const remainder = (order: 0 | 1, t: Fixed, sign: 1n | -1n): Fixed => divide(series(order, t, sign) - one, t);
+/** (x/2)^−n·I_n less its value at 0, over t = (x/2)². */
+const remainder = (order: 0 | 1, t: Fixed): Fixed => divide(series(order, t, 1n) - one, t);
 
 const modified: readonly Table[] = both((order): Table[] => [
   {
@@ -68,7 +68,7 @@ const modified: readonly Table[] = both((order): Table[] => [
     meaning: `(2/x)^${order}·I_${order}(x) = 1 + (x²/4)·Σ, 0 ≤ x ≤ 2, in x²`,
     from: 0n,
     to: fromRatio(4),
-    f: (v) => remainder(order, square(v), 1n),
+    f: (v) => remainder(order, square(v)),
   },
   {
     name: `i${order}Middle`,
@@ -132,10 +132,10 @@ const modified: readonly Table[] = both((order): Table[] => [
 const ordinary: readonly Table[] = both((order): Table[] => [
   {
     name: `j${order}Near`,
-    meaning: `(2/x)^${order}·J_${order}(x) = 1 − (x²/4)·Σ, 0 ≤ x ≤ 4, in x²`,
+    meaning: `(2/x)^${order}·J_${order}(x), 0 ≤ x ≤ 4, in x²`,
     from: 0n,
     to: fromRatio(16),
-    f: (v) => -remainder(order, square(v), -1n),
+    f: (v) => series(order, square(v), -1n),
   },
   order === 0
     ? {
