@@ -25,9 +25,9 @@ interface Asked {
 
 /** The present form, run by the API as one types. The last good answer stays in view while a text cannot be read. */
 export function useEvaluation({ slug, revision, built, units }: Asked) {
-  const body = JSON.stringify({ inputs: built.inputs, units, steps: true });
-  const settled = useSettled(body, 120);
   const readable = Object.keys(built.faults).length === 0;
+  const body = readable ? JSON.stringify({ inputs: built.inputs, units, steps: true }) : "";
+  const settled = useSettled(body, 120);
   const query = useQuery({
     queryKey: ["evaluate", slug, revision, settled],
     queryFn: ({ signal }) =>
@@ -35,7 +35,7 @@ export function useEvaluation({ slug, revision, built, units }: Asked) {
         body: JSON.parse(settled) as unknown,
         signal,
       }),
-    enabled: readable,
+    enabled: readable && settled !== "",
     placeholderData: keepPreviousData,
     // A lost connection is said at once and tried until it is back; nobody has to press anything.
     retry: (_, error) => isPassing(error),
