@@ -10,7 +10,7 @@ import {
   XAxis,
   YAxis,
 } from "recharts";
-import { niceTicks } from "@/app/_components/plot/ticks";
+import { argumentAxis, plotMargin, tickText, tooltipStyle, valueAxis } from "@/app/_components/plot/axes";
 import { formatSignificant } from "@/lib/units";
 
 interface PropertyPlotProps {
@@ -21,9 +21,6 @@ interface PropertyPlotProps {
   argumentUnit: string;
   relativeUncertainty: number | null;
 }
-
-const tickText = (value: number) => formatSignificant(value, 3).replace(/\.0+$/, "");
-const tickStyle = { fontSize: 12, fill: "var(--ink)", fontFamily: "var(--font-mono)" };
 
 /** A property over its valid range, with the band of its stated uncertainty. */
 export function PropertyChart({ label, points, unit, argumentUnit, relativeUncertainty }: PropertyPlotProps) {
@@ -37,7 +34,6 @@ export function PropertyChart({ label, points, unit, argumentUnit, relativeUncer
   const values = rows.flatMap((row) => ("band" in row && row.band ? row.band : [row.value]));
   const low = points[0]?.argument ?? 0;
   const high = points.at(-1)?.argument ?? 1;
-  const yTicks = niceTicks(Math.min(...values), Math.max(...values), 6);
   return (
     <div
       className="h-[300px]"
@@ -45,44 +41,12 @@ export function PropertyChart({ label, points, unit, argumentUnit, relativeUncer
       aria-label={`${label} from ${tickText(low)} to ${tickText(high)} ${argumentUnit}`}
     >
       <ResponsiveContainer width="100%" height="100%">
-        <ComposedChart
-          data={rows}
-          margin={{ top: 20, right: 16, bottom: 22, left: 12 }}
-          accessibilityLayer={false}
-        >
+        <ComposedChart data={rows} margin={plotMargin} accessibilityLayer={false}>
           <CartesianGrid stroke="var(--soft)" />
-          <XAxis
-            dataKey="argument"
-            type="number"
-            domain={[low, high]}
-            ticks={niceTicks(low, high, 7).filter((tick) => tick >= low && tick <= high)}
-            tickFormatter={tickText}
-            stroke="var(--muted)"
-            tick={tickStyle}
-            label={{
-              value: `Temperature, ${argumentUnit}`,
-              position: "insideBottom",
-              offset: -14,
-              fontSize: 12,
-              fill: "var(--muted)",
-            }}
-          />
-          <YAxis
-            domain={[yTicks[0] ?? 0, yTicks.at(-1) ?? 1]}
-            ticks={yTicks}
-            tickFormatter={tickText}
-            stroke="var(--muted)"
-            width={68}
-            tick={tickStyle}
-            label={{ value: unit, position: "top", offset: 8, dx: 20, fontSize: 12, fill: "var(--muted)" }}
-          />
+          <XAxis dataKey="argument" {...argumentAxis(low, high, "Temperature", argumentUnit)} />
+          <YAxis {...valueAxis(values, unit)} />
           <Tooltip
-            contentStyle={{
-              background: "var(--sheet)",
-              border: "1px solid var(--ink)",
-              borderRadius: 2,
-              fontSize: 12,
-            }}
+            contentStyle={tooltipStyle}
             labelFormatter={(value) => `${formatSignificant(Number(value), 4)} ${argumentUnit}`}
             formatter={(value, key) =>
               key === "band" && Array.isArray(value)

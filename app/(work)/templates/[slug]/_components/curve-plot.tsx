@@ -13,7 +13,7 @@ import {
 } from "recharts";
 import type { z } from "zod";
 import { callApi } from "@/app/_components/api-client";
-import { niceTicks } from "@/app/_components/plot/ticks";
+import { argumentAxis, plotMargin, tooltipStyle, valueAxis } from "@/app/_components/plot/axes";
 import type { CurveFigure, Definition } from "@/lib/calculation/definition";
 import { formatSignificant } from "@/lib/units";
 import type { BuiltRequest } from "./build-request";
@@ -89,10 +89,6 @@ export function CurvePlot({
   const all = rows
     .flatMap((row) => figure.y.map((name) => (row as Record<string, number>)[name]))
     .filter((value): value is number => value !== undefined && Number.isFinite(value));
-  const ticks = all.length > 0 ? niceTicks(Math.min(...all), Math.max(...all), 6) : [];
-  const name = (text: string, textUnit: string) =>
-    textUnit === "" || textUnit === "1" ? text : `${text}, ${textUnit}`;
-
   return (
     <figure className="pb-2">
       <figcaption className="mb-1 text-[13px]">
@@ -107,60 +103,17 @@ export function CurvePlot({
         aria-label={`${labels.join(" and ")} against ${input?.label ?? symbol}, from ${figure.x.from} to ${figure.x.to} ${unit}`}
       >
         <ResponsiveContainer width="100%" height="100%">
-          <LineChart
-            data={rows}
-            margin={{ top: 22, right: 16, bottom: 22, left: 12 }}
-            accessibilityLayer={false}
-          >
+          <LineChart data={rows} margin={plotMargin} accessibilityLayer={false}>
             <CartesianGrid stroke="var(--soft)" />
             <XAxis
               dataKey="x"
-              type="number"
-              scale={figure.x.scale === "log" ? "log" : "linear"}
-              domain={[figure.x.from, figure.x.to]}
-              ticks={
-                figure.x.scale === "log"
-                  ? undefined
-                  : niceTicks(figure.x.from, figure.x.to, 7).filter(
-                      (tick) => tick >= figure.x.from && tick <= figure.x.to,
-                    )
-              }
-              tickFormatter={(value: number) => formatSignificant(value, 3).replace(/\.0+$/, "")}
-              stroke="var(--muted)"
-              tick={{ fontSize: 12, fill: "var(--ink)", fontFamily: "var(--font-mono)" }}
-              label={{
-                value: name(input?.label ?? symbol, unit),
-                position: "insideBottom",
-                offset: -14,
-                fontSize: 12,
-                fill: "var(--muted)",
-              }}
+              {...argumentAxis(figure.x.from, figure.x.to, input?.label ?? symbol, unit, figure.x.scale)}
             />
-            <YAxis
-              domain={[ticks[0] ?? 0, ticks.at(-1) ?? 1]}
-              ticks={ticks}
-              tickFormatter={(value: number) => formatSignificant(value, 3).replace(/\.0+$/, "")}
-              stroke="var(--muted)"
-              width={64}
-              tick={{ fontSize: 12, fill: "var(--ink)", fontFamily: "var(--font-mono)" }}
-              label={{
-                value: yUnit === "1" ? "" : yUnit,
-                position: "top",
-                offset: 8,
-                dx: 16,
-                fontSize: 12,
-                fill: "var(--muted)",
-              }}
-            />
+            <YAxis {...valueAxis(all, yUnit)} />
             <Tooltip
-              contentStyle={{
-                background: "var(--sheet)",
-                border: "1px solid var(--ink)",
-                borderRadius: 2,
-                fontSize: 12,
-              }}
+              contentStyle={tooltipStyle}
               labelFormatter={(value) =>
-                `${name(input?.label ?? symbol, "")} ${formatSignificant(Number(value), 4)} ${unit === "1" ? "" : unit}`
+                `${input?.label ?? symbol} ${formatSignificant(Number(value), 4)} ${unit === "1" ? "" : unit}`
               }
               formatter={(value, key) => [
                 `${formatSignificant(Number(value), 4)} ${yUnit === "1" ? "" : yUnit}`,
