@@ -52,12 +52,23 @@ export interface FieldProblem {
   limit?: string | number;
 }
 
+const mark = Symbol.for("coldface.CodedError");
+
 /** The one error class of the product's own rooms. Everything else that is thrown is a fault of ours. */
 export class CodedError extends Error {
   readonly code: ErrorCode;
   readonly problems: FieldProblem[];
   /** Members beside the standard ones, for example the present ETag of a stale write. */
   readonly extra: Record<string, unknown>;
+
+  get [mark](): true {
+    return true;
+  }
+
+  /** The bundler loads this module once for the start of the server and once for its routes; errors of both are one class. */
+  static override [Symbol.hasInstance](value: unknown): boolean {
+    return typeof value === "object" && value !== null && mark in value;
+  }
 
   constructor(
     code: ErrorCode,
