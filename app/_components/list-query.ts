@@ -1,4 +1,5 @@
 import type { z } from "zod";
+import { CodedError } from "@/lib/core/errors";
 
 type SearchParams = Record<string, string | string[] | undefined>;
 
@@ -16,6 +17,20 @@ export function listQuery<Schema extends z.ZodObject>(schema: Schema, given: Sea
   if (first.success) return first.data;
   for (const issue of first.error.issues) delete members[String(issue.path[0])];
   return schema.parse(members);
+}
+
+/** A page of a list. A cursor that is none of ours begins with the first row instead of a broken page. */
+export async function pageFrom<Query extends { cursor?: string | undefined }, Page>(
+  query: Query,
+  list: (query: Query) => Promise<Page>,
+): Promise<Page> {
+  try {
+    return await list(query);
+  } catch (error) {
+    const cursor = error instanceof CodedError && error.code === "invalid-input" ? query.cursor : undefined;
+    if (cursor === undefined) throw error;
+    return list({ ...query, cursor: undefined });
+  }
 }
 
 /** Address of the rows that follow. */

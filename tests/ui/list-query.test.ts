@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { listQuery, nextAddress } from "@/app/_components/list-query";
+import { listQuery, nextAddress, pageFrom } from "@/app/_components/list-query";
+import { CodedError } from "@/lib/core/errors";
 import { ListTemplatesQuery } from "@/lib/templates/schemas";
 
 describe("the query of a list page", () => {
@@ -27,5 +28,17 @@ describe("the query of a list page", () => {
       "/templates?search=pipe+%26+fin&cursor=new",
     );
     expect(nextAddress("/templates", {}, null)).toBeNull();
+  });
+
+  it("begins at the first row when the cursor is none of ours, and hides no other error", async () => {
+    const list = (cursor?: string) => {
+      if (cursor === "torn") throw new CodedError("invalid-input", "The cursor is not one of ours.");
+      if (cursor === "late") throw new CodedError("busy", "Later.");
+      return Promise.resolve(cursor ?? "first");
+    };
+    const page = (cursor?: string) => pageFrom({ cursor }, async (query) => list(query.cursor));
+    expect(await page("torn")).toBe("first");
+    expect(await page("next")).toBe("next");
+    await expect(page("late")).rejects.toThrow("Later.");
   });
 });

@@ -2,7 +2,7 @@ import type { Metadata } from "next";
 import Link from "next/link";
 import { DataTable } from "@/app/_components/data-table";
 import { FilterForm } from "@/app/_components/filter-form";
-import { listQuery, nextAddress } from "@/app/_components/list-query";
+import { listQuery, nextAddress, pageFrom } from "@/app/_components/list-query";
 import { EmptyState, PageFrame, Sheet } from "@/app/_components/page-frame";
 import { requireActor } from "@/app/_components/require-actor";
 import { StateMark } from "@/app/_components/state-mark";
@@ -24,7 +24,7 @@ export default async function MaterialsPage({
   const actor = await requireActor();
   const given = await searchParams;
   const query = listQuery(ListMaterialsQuery, { limit: "100", ...given });
-  const page = await listMaterials(actor, query);
+  const page = await pageFrom(query, (wanted) => listMaterials(actor, wanted));
   const filtered = query.search !== undefined || query.class !== undefined;
   return (
     <PageFrame title="Materials">

@@ -2,7 +2,7 @@ import type { Metadata } from "next";
 import Link from "next/link";
 import { DataTable } from "@/app/_components/data-table";
 import { FilterForm } from "@/app/_components/filter-form";
-import { listQuery, nextAddress } from "@/app/_components/list-query";
+import { listQuery, nextAddress, pageFrom } from "@/app/_components/list-query";
 import { EmptyState, PageFrame, Sheet } from "@/app/_components/page-frame";
 import { requireActor } from "@/app/_components/require-actor";
 import { StatusMark } from "@/app/_components/status-mark";
@@ -23,7 +23,7 @@ export default async function RecordsPage({
   const actor = await requireActor();
   const given = await searchParams;
   const query = listQuery(ListRecordsQuery, given);
-  const page = await listRecords(actor, query);
+  const page = await pageFrom(query, (wanted) => listRecords(actor, wanted));
   const filtered = filters.some((name) => query[name] !== undefined);
   return (
     <PageFrame title="Records">

@@ -12,7 +12,7 @@ interface Props {
   evaluation: Evaluation | null;
   stale: boolean;
   pending: boolean;
-  /** Symbols of fields that cannot be read. */
+  /** Labels of fields that cannot be run with. */
   waiting: readonly string[];
   /** Sentences that belong to no field. */
   general: readonly string[];
@@ -25,15 +25,7 @@ export function ResultsPane({ definition, evaluation, stale, pending, waiting, g
     <div className="min-w-0 px-6 pb-5 pt-4 max-md:px-4">
       <h2 className="mb-2.5">
         Results
-        {waiting.length > 0 ? (
-          <small>
-            waiting for{" "}
-            {waiting
-              .map((field) => field.split(".")[0])
-              .filter((field, index, all) => all.indexOf(field) === index)
-              .join(", ")}
-          </small>
-        ) : null}
+        {stale ? <small>waiting{waiting.length > 0 ? ` for: ${waiting.join(", ")}` : ""}</small> : null}
         {stale || !pending ? null : <small aria-hidden="true">running</small>}
       </h2>
       <div role="alert">

@@ -63,9 +63,11 @@ export function RunDesk(props: RunDeskProps) {
     form.setValue(`inputs.${symbol}`, state, { shouldDirty: true });
   const simple = definition.inputs.filter((input) => input.kind !== "table" && shown(input));
   const tables = definition.inputs.filter((input) => input.kind === "table" && shown(input));
-  const waiting = Object.keys(built.faults);
+  const waiting = definition.inputs
+    .filter(({ symbol }) => Object.keys(faults).some((place) => place.split(".")[0] === symbol))
+    .map(({ label }) => label);
   const evaluation = run.evaluation;
-  const stale = waiting.length > 0 || run.problem !== null;
+  const stale = Object.keys(built.faults).length > 0 || run.problem !== null;
 
   return (
     <>

@@ -189,7 +189,7 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
         ) : null}
         {Object.entries(faults).map(([place, message]) => (
           <p key={place} id={faultId(place)} className="mt-1">
-            Row {Number(place.split(".")[0]) + 1}: {message}
+            {rowSentence(input.label, Number(place.split(".")[0]) + 1, message)}
           </p>
         ))}
       </div>
@@ -201,6 +201,12 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
       </div>
     </fieldset>
   );
+}
+
+/** A sentence about a row, named once; those of the interface name table and row already. */
+function rowSentence(table: string, row: number, message: string): string {
+  const named = `${table}, row ${row}: `;
+  return `Row ${row}: ${message.startsWith(named) ? message.slice(named.length) : message}`;
 }
 
 function hasUnit(column: Column): column is Extract<Column, { kind: "number" }> {
