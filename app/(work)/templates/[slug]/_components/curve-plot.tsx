@@ -14,10 +14,12 @@ import {
 import type { z } from "zod";
 import { callApi } from "@/app/_components/api-client";
 import { argumentAxis, plotMargin, tooltipStyle, valueAxis } from "@/app/_components/plot/axes";
-import type { CurveFigure, Definition } from "@/lib/calculation/definition";
+import type { CurveFigure, Definition, NumberInput } from "@/lib/calculation/definition";
+import type { GivenValue } from "@/lib/calculation/evaluation";
 import { formatSignificant } from "@/lib/units";
 import type { BuiltRequest } from "./build-request";
 import { useSettled } from "./use-evaluation";
+import { convertText } from "./use-units";
 
 type CurveFigure = z.infer<typeof CurveFigure>;
 
@@ -36,6 +38,14 @@ function places(figure: CurveFigure): number[] {
     const share = index / (points - 1);
     return scale === "log" ? from * (to / from) ** share : from + (to - from) * share;
   });
+}
+
+/** Where this run stands on the axis, in the unit of the axis. */
+function placeOf(input: NumberInput, given: GivenValue | undefined): number | undefined {
+  if (given === undefined) return input.default;
+  if (given === null || typeof given !== "object" || !("value" in given)) return undefined;
+  const converted = convertText(given.value, given.unit ?? input.unit, input.unit, input.quantity);
+  return converted === null ? undefined : Number(converted);
 }
 
 /** Results against one input, drawn through evaluate-rows with the form's other inputs. */
@@ -57,8 +67,9 @@ export function CurvePlot({
   const unit = input?.kind === "number" ? input.unit : "1";
   const others = Object.fromEntries(Object.entries(built.inputs).filter(([name]) => name !== symbol));
   const xs = places(figure);
+  const drawable = Object.keys(built.faults).every((field) => field === symbol);
   const body = useSettled(
-    JSON.stringify({ common: others, rows: xs.map((value) => ({ [symbol]: value })) }),
+    drawable ? JSON.stringify({ common: others, rows: xs.map((value) => ({ [symbol]: value })) }) : "",
     350,
   );
   const query = useQuery({
@@ -68,7 +79,7 @@ export function CurvePlot({
         body: JSON.parse(body) as unknown,
         signal,
       }),
-    enabled: Object.keys(built.faults).every((field) => field === symbol),
+    enabled: drawable && body !== "",
     placeholderData: (previous) => previous,
   });
 
@@ -76,12 +87,7 @@ export function CurvePlot({
     "results" in row ? [{ x: xs[index] ?? 0, ...row.results }] : [],
   );
   const given = built.inputs[symbol];
-  const present =
-    typeof given === "object" && given !== null && "value" in given && given.unit === unit
-      ? given.value
-      : input?.kind === "number" && given === undefined
-        ? input.default
-        : undefined;
+  const present = input?.kind === "number" ? placeOf(input, given) : undefined;
   const labels = figure.y.map(
     (name) => definition.results.find((result) => result.symbol === name)?.label ?? name,
   );
@@ -90,7 +96,7 @@ export function CurvePlot({
     .flatMap((row) => figure.y.map((name) => (row as Record<string, number>)[name]))
     .filter((value): value is number => value !== undefined && Number.isFinite(value));
   return (
-    <figure className="pb-2">
+    <figure className={`pb-2 ${drawable ? "" : "opacity-60"}`}>
       <figcaption className="mb-1 text-[13px]">
         <span className="font-[620] [font-stretch:92%]">{figure.title}</span>
         <span className="ml-3 text-muted">
