@@ -22,7 +22,8 @@ interface PickerProps {
   faultId?: string;
 }
 
-const constantKey = "\u0000constant";
+/* No slug has a colon. */
+const constantKey = ":constant";
 
 /** Library of materials that have what is needed, or a constant typed in their place. */
 export function MaterialPicker({

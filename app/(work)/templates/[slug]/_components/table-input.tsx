@@ -31,10 +31,12 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
   const change = (rows: RowState[], units = state.units) =>
     onChange({ ...state, rows, units, origin: "typed" });
   // Whoever moves a row by keyboard goes with it, and is not thrown to the top of the page when it is gone.
-  const changeAndGoTo = (rows: RowState[], row: number, wanted: string) => {
+  const changeAndGoTo = (rows: RowState[], row: number, wanted: readonly string[]) => {
     flushSync(() => change(rows));
-    const places = body.current?.children[row]?.querySelectorAll<HTMLElement>(wanted);
-    [...(places ?? [])].find((place) => !place.matches(":disabled"))?.focus();
+    const places = wanted.map((place) =>
+      body.current?.children[row]?.querySelector<HTMLElement>(`${place}:not(:disabled)`),
+    );
+    places.find((place) => place)?.focus();
   };
   const setCell = (index: number, symbol: string, cell: CellState) =>
     change(state.rows.map((row, at) => (at === index ? { cells: { ...row.cells, [symbol]: cell } } : row)));
@@ -42,11 +44,15 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
     const rows = [...state.rows];
     const [row] = rows.splice(from, 1);
     if (row) rows.splice(to, 0, row);
-    changeAndGoTo(rows, to, to < from ? "[data-move=up], button" : "[data-move=down], button");
+    changeAndGoTo(
+      rows,
+      to,
+      to < from ? ["[data-move=up]", "[data-move=down]"] : ["[data-move=down]", "[data-move=up]"],
+    );
   };
   const remove = (index: number) => {
     const rows = state.rows.filter((_, at) => at !== index);
-    changeAndGoTo(rows, Math.min(index, rows.length - 1), "[data-move=none], input, select");
+    changeAndGoTo(rows, Math.min(index, rows.length - 1), ["[data-move=none]", "input", "select"]);
   };
   const add = () => {
     const cells = Object.fromEntries(
@@ -55,7 +61,7 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
         cellState(column, undefined, state.units[column.symbol]),
       ]),
     );
-    changeAndGoTo([...state.rows, { cells }], state.rows.length, "input, select");
+    changeAndGoTo([...state.rows, { cells }], state.rows.length, ["input", "select"]);
   };
   const paste = (text: string, atRow: number, atColumn: number) => {
     const pasted = rowsFromClipboard(text, input, state, atRow, atColumn);
