@@ -100,3 +100,17 @@ describe("temperatures to the last digit", () => {
     expect(fromSi(toSi(fahrenheit, f.value, "absolute"), f.value, "absolute")).toBeCloseTo(fahrenheit, 11);
   });
 });
+
+describe("lengths to the last digit", () => {
+  // 1 in = 25.4 mm, 1 ft = 304.8 mm, 1 mil = 25.4 µm exactly (NIST SP 811).
+  it.each([
+    [3, "in", 0.0762],
+    [0.1, "in", 0.00254],
+    [7, "ft", 2.1336],
+    [11, "mil", 0.0002794],
+    [35, "mm", 0.035],
+  ] as const)("reads %d %s as the double nearest to its metres", (value, symbol, metres) => {
+    expect(toSi(value, unit(symbol), "plain")).toBe(metres);
+    expect(fromSi(metres, unit(symbol), "plain")).toBeCloseTo(value, 13);
+  });
+});
