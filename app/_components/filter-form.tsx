@@ -37,7 +37,10 @@ export function FilterForm({ fields }: { fields: readonly FilterField[] }) {
       className="mb-4 flex flex-wrap items-end gap-3 max-md:px-4"
     >
       {fields.map((field) => (
-        <div key={field.name} className="min-w-0 max-md:w-full">
+        <div
+          key={field.name}
+          className={`min-w-0 ${field.options ? "max-md:w-[calc(50%-6px)]" : "max-md:w-full"}`}
+        >
           <label htmlFor={`${id}${field.name}`} className="mb-1 block text-[12px] text-muted">
             {field.label}
           </label>
@@ -47,7 +50,7 @@ export function FilterForm({ fields }: { fields: readonly FilterField[] }) {
               name={field.name}
               defaultValue={present.get(field.name) ?? ""}
               onChange={(event) => event.target.form && apply(event.target.form)}
-              className="h-9 min-w-44 rounded border border-rule bg-field px-2 max-md:h-11 max-md:w-full"
+              className="h-9 min-w-44 rounded border border-rule bg-field pl-2 pr-6 max-md:h-11 max-md:min-w-0 max-md:w-full"
             >
               <option value="">all</option>
               {field.options.map((option) => (

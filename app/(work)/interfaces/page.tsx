@@ -74,8 +74,8 @@ export default async function InterfacesPage({
               Put it into the environment: <code className="num text-[13px]">export COLDFACE_KEY=cfk_…</code>
             </li>
             <li>
-              Run the call on the right. Inputs that are left out keep their defaults and are named in the
-              reply.
+              Run the call that is shown here. Inputs that are left out keep their defaults and are named in
+              the reply.
             </li>
           </ol>
           <h2 className="mb-1 mt-5">What a value looks like</h2>

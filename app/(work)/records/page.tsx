@@ -2,6 +2,7 @@ import type { Metadata } from "next";
 import Link from "next/link";
 import { DataTable } from "@/app/_components/data-table";
 import { FilterForm } from "@/app/_components/filter-form";
+import { keeperText } from "@/app/_components/keeper-text";
 import { listQuery, nextAddress, pageFrom } from "@/app/_components/list-query";
 import { EmptyState, PageFrame, Sheet } from "@/app/_components/page-frame";
 import { requireActor } from "@/app/_components/require-actor";
@@ -107,7 +108,7 @@ const columns = [
     cell: (row: RecordItem) => (
       <span className="whitespace-nowrap text-[13px] text-muted">
         {momentText(row.createdAt)}
-        <span className="block">{row.createdBy.name}</span>
+        <span className="block">{keeperText(row.createdBy)}</span>
       </span>
     ),
   },

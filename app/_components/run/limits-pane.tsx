@@ -1,3 +1,5 @@
+import type { ReactNode } from "react";
+import { SymbolText } from "../symbol";
 import { formatSignificant } from "@/lib/units";
 import type { Definition } from "@/lib/calculation/definition";
 import type { Evaluation, LimitVerdict } from "@/lib/calculation/evaluation";
@@ -82,11 +84,7 @@ export function LimitsPane({
           <Item
             level="caution"
             broken
-            title={
-              defaulted.length === 1
-                ? `One input is an untouched default: ${defaulted[0]}`
-                : `${defaulted.length} inputs are untouched defaults: ${defaulted.join(", ")}`
-            }
+            title={<Defaulted definition={definition} symbols={defaulted} />}
             text={null}
           />
         ) : null}
@@ -103,6 +101,26 @@ export function LimitsPane({
   );
 }
 
+/** Which inputs nobody has typed: by symbol for the eye, by name for the ear. */
+function Defaulted({ definition, symbols }: { definition: Definition; symbols: readonly string[] }) {
+  const label = (symbol: string) =>
+    definition.inputs.find((input) => input.symbol === symbol)?.label ?? symbol;
+  return (
+    <>
+      {symbols.length === 1
+        ? "One input is an untouched default: "
+        : `${symbols.length} inputs are untouched defaults: `}
+      {symbols.map((symbol, index) => (
+        <span key={symbol}>
+          {index === 0 ? "" : ", "}
+          <SymbolText symbol={symbol} />
+          <span className="sr-only">{label(symbol)}</span>
+        </span>
+      ))}
+    </>
+  );
+}
+
 function Item({
   level,
   broken,
@@ -111,7 +129,7 @@ function Item({
 }: {
   level: "caution" | "stop";
   broken: boolean;
-  title: string;
+  title: ReactNode;
   text: string | null;
 }) {
   return (

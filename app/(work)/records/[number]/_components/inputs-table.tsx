@@ -18,16 +18,25 @@ function unitText(unit: string): string {
 }
 
 /** A value as it was used: number with unit, option, or material with its revision. */
-function cellText(cell: UsedCell | undefined): string {
+function cellText(cell: UsedCell | undefined, materialNames: Readonly<Record<string, string>>): string {
   if (cell === undefined) return "\u2013";
   if ("si" in cell) return `${formatExact(cell.value)}${unitText(cell.unit)}`;
-  if ("material" in cell) return `${cell.material}, revision ${cell.revision}`;
+  if ("material" in cell)
+    return `${materialNames[cell.material] ?? cell.material}, revision ${cell.revision}`;
   if ("constant" in cell) return `${formatExact(cell.constant.value)}${unitText(cell.constant.unit)}`;
   return "option" in cell ? cell.option : cell.text;
 }
 
 /** Inputs as used, with where each came from. */
-export function InputsTable({ record, definition }: { record: RecordView; definition: Definition }) {
+export function InputsTable({
+  record,
+  definition,
+  materialNames,
+}: {
+  record: RecordView;
+  definition: Definition;
+  materialNames: Readonly<Record<string, string>>;
+}) {
   const present = definition.inputs.filter((input) => input.symbol in record.inputs);
   const origin = (input: Input): string => {
     if (record.defaulted.includes(input.symbol)) return originWords.default;
@@ -56,7 +65,7 @@ export function InputsTable({ record, definition }: { record: RecordView; defini
                     <SymbolText symbol={input.symbol} />
                     <span>{input.label}</span>
                   </dt>
-                  <dd className="num text-right">{option ?? cellText(used)}</dd>
+                  <dd className="num text-right">{option ?? cellText(used, materialNames)}</dd>
                   <dd className="col-span-2 col-start-2 text-right text-[12px] text-muted">
                     {origin(input)}
                   </dd>
@@ -95,7 +104,7 @@ export function InputsTable({ record, definition }: { record: RecordView; defini
                         key={column.symbol}
                         className={`py-1 pr-3 align-baseline last:pr-0 ${column.kind === "number" ? "num whitespace-nowrap text-right" : ""}`}
                       >
-                        {cellText(row[column.symbol])}
+                        {cellText(row[column.symbol], materialNames)}
                       </td>
                     ))}
                   </tr>

@@ -6,8 +6,10 @@ import { SectionStrip } from "@/app/_components/section-strip/section-strip";
 import { StatusMark } from "@/app/_components/status-mark";
 import { momentText } from "@/app/_components/time-text";
 import { TitleBlock } from "@/app/_components/title-block";
+import { keeperText } from "@/app/_components/keeper-text";
 import type { PersonActor } from "@/lib/access/actor";
 import { paths } from "@/lib/core/paths";
+import { getMaterialRevision } from "@/lib/materials/get-material";
 import { installation } from "@/lib/people/installation";
 import type { RecordView } from "@/lib/records/schemas";
 import { sectionModel } from "@/lib/sheet/section-model";
@@ -33,8 +35,8 @@ export async function RecordReport({ actor, record, revision }: Props) {
   const labels = Object.fromEntries(
     definition.inputs.map((input) => [input.symbol, input.label.toLowerCase()]),
   );
-  const section =
-    figure?.kind === "section" ? sectionModel(figure, record, { classes: {}, names: {}, labels }) : null;
+  const materials = await materialsOf(actor, record);
+  const section = figure?.kind === "section" ? sectionModel(figure, record, { ...materials, labels }) : null;
 
   return (
     <main
@@ -64,7 +66,7 @@ export async function RecordReport({ actor, record, revision }: Props) {
           <p className="mt-1.5 flex flex-wrap items-center gap-x-3.5 gap-y-1 text-[13px] text-muted">
             <StatusMark status={record.status} voided={record.void !== null} />
             <span>{momentText(record.createdAt)}</span>
-            <span>kept by {record.createdBy.name}</span>
+            <span>kept by {keeperText(record.createdBy)}</span>
             {record.tags.map((tag) => (
               <Link
                 prefetch={false}
@@ -93,7 +95,7 @@ export async function RecordReport({ actor, record, revision }: Props) {
         </p>
       )}
       <div className="grid border border-rule bg-sheet max-md:border-x-0 md:grid-cols-[minmax(340px,428px)_minmax(0,1fr)]">
-        <InputsTable record={record} definition={definition} />
+        <InputsTable record={record} definition={definition} materialNames={materials.names} />
         <section className="min-w-0" aria-label="Results and limits">
           {section ? (
             <div className="border-b border-rule px-6 pb-1.5 pt-3.5 max-md:px-2">
@@ -124,7 +126,7 @@ export async function RecordReport({ actor, record, revision }: Props) {
         revision={`${record.template}, ${record.revision}`}
         dateOfIssue={record.createdAt.slice(0, 10)}
         people={[
-          ["Prepared by", record.createdBy.name],
+          ["Prepared by", keeperText(record.createdBy)],
           ["Template issued by", revision.issuedBy?.name ?? "\u2013"],
         ]}
         identification={record.number}
@@ -158,4 +160,18 @@ export async function RecordReport({ actor, record, revision }: Props) {
       </dl>
     </main>
   );
+}
+
+/** Names and classes of the materials that a record used, in the revisions that it used. */
+async function materialsOf(actor: PersonActor, record: RecordView) {
+  const used = await Promise.all(
+    record.materials.map(async (material) => {
+      const { definition } = await getMaterialRevision(actor, material);
+      return { slug: material.slug, name: definition.name, class: definition.class };
+    }),
+  );
+  return {
+    names: Object.fromEntries(used.map((material) => [material.slug, material.name])),
+    classes: Object.fromEntries(used.map((material) => [material.slug, material.class])),
+  };
 }

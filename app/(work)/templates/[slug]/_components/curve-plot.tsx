@@ -131,7 +131,12 @@ export function CurvePlot({
                 x={present}
                 stroke="var(--ink)"
                 strokeDasharray="2 3"
-                label={{ value: "this run", position: "insideTopRight", fontSize: 11, fill: "var(--muted)" }}
+                label={{
+                  value: "this run",
+                  position: present < (figure.x.from + figure.x.to) / 2 ? "insideTopLeft" : "insideTopRight",
+                  fontSize: 11,
+                  fill: "var(--muted)",
+                }}
               />
             )}
             {figure.y.map((result, index) => (

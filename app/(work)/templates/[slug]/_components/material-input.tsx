@@ -57,7 +57,7 @@ export function MaterialPicker({
         }
         {...(constant ? {} : told)}
         aria-label={label}
-        className={`h-8 w-full min-w-0 rounded border bg-field px-2 disabled:text-muted max-md:h-11 ${border}`}
+        className={`h-8 w-full min-w-0 rounded border bg-field pl-2 pr-6 disabled:text-muted max-md:h-11 ${border}`}
       >
         {slug === "" && !constant ? <option value="">choose a material</option> : null}
         {slug !== "" && !fitting.some((material) => material.slug === slug) ? (
@@ -104,7 +104,7 @@ export function MaterialInput({ input, state, materials, onChange, fault }: Prop
   const id = useId();
   const chosen = materials.find((material) => material.slug === state.slug);
   return (
-    <div className="grid grid-cols-[minmax(0,1fr)_176px] items-start gap-x-3 py-[5px] max-sm:grid-cols-[minmax(0,1fr)_164px]">
+    <div className="grid grid-cols-[minmax(0,1fr)_minmax(0,224px)] items-start gap-x-3 py-[5px] max-sm:grid-cols-[minmax(0,1fr)_200px]">
       <label htmlFor={id} className="grid grid-cols-[44px_1fr] items-center gap-1.5 pt-0.5">
         {chosen ? (
           <HatchSwatch hatch={classHatch[chosen.class]} id={`${id}-hatch`} />

@@ -69,7 +69,7 @@ export function TableCell({ column, cell, name, faultId, materials, onChange, on
         value={cell.option}
         onChange={(event) => onChange({ ...cell, option: event.target.value })}
         {...told}
-        className={`h-[30px] w-full rounded border bg-field px-1 max-md:h-11 ${border}`}
+        className={`h-[30px] w-full rounded border bg-field pl-1 pr-6 max-md:h-11 ${border}`}
       >
         {cell.option === "" ? <option value="">choose</option> : null}
         {column.options.map((option) => (

@@ -90,16 +90,16 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
         {input.label}
         {state.origin === "default" ? <small>default, not typed</small> : null}
       </h2>
-      <div className="overflow-x-auto max-md:overflow-visible">
-        <table role="table" className="w-full border-collapse max-md:block">
-          <thead role="rowgroup" className="max-md:block">
-            <tr role="row" className="max-md:flex max-md:flex-wrap max-md:gap-x-4">
+      <div data-blocks={isWide(input.columns) ? "" : undefined}>
+        <table role="table" className="w-full border-collapse blocks:block">
+          <thead role="rowgroup" className="blocks:block">
+            <tr role="row" className="blocks:flex blocks:flex-wrap blocks:gap-x-4">
               {input.columns.map((column) => (
                 <th
                   key={column.symbol}
                   scope="col"
                   role="columnheader"
-                  className={`pb-1 pr-2 text-left align-bottom text-[12px] font-normal leading-4 text-muted max-md:flex max-md:items-center max-md:gap-1.5 max-md:p-0 ${hasUnit(column) ? "" : "max-md:sr-only"}`}
+                  className={`pb-1 pr-2 text-left align-bottom text-[12px] font-normal leading-4 text-muted blocks:flex blocks:items-center blocks:gap-1.5 blocks:p-0 ${hasUnit(column) ? "" : "blocks:sr-only"}`}
                 >
                   <span className="block">{column.label}</span>
                   {hasUnit(column) ? (
@@ -113,30 +113,26 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
                   ) : null}
                 </th>
               ))}
-              <th role="columnheader" className="w-[72px] max-md:sr-only">
+              <th role="columnheader" className="w-[72px] blocks:sr-only">
                 <span className="sr-only">Move or remove</span>
               </th>
             </tr>
           </thead>
-          <tbody role="rowgroup" ref={body} className="max-md:block">
+          <tbody role="rowgroup" ref={body} className="blocks:block">
             {state.rows.map((row, index) => (
               <tr
                 key={index}
                 role="row"
-                className="max-md:flex max-md:flex-wrap max-md:items-end max-md:gap-x-2 max-md:border-t max-md:border-soft max-md:py-2"
+                className="blocks:flex blocks:flex-wrap blocks:items-end blocks:gap-x-2 blocks:border-t blocks:border-soft blocks:py-2"
               >
                 {input.columns.map((column, columnIndex) => {
                   const place = [`${index}.${column.symbol}`, String(index)].find((key) => key in faults);
                   return (
-                    <td
-                      key={column.symbol}
-                      role="cell"
-                      className={`py-0.5 pr-1.5 align-middle max-md:min-w-0 max-md:flex-1 max-md:p-0 ${column.kind === "number" ? "w-[80px]" : "min-w-[98px]"} ${columnIndex === 0 ? "max-md:basis-[calc(100%-144px)]" : "max-md:order-2 max-md:basis-[calc(50%-8px)]"}`}
-                    >
+                    <td key={column.symbol} role="cell" className={cellLook(input.columns, columnIndex)}>
                       {columnIndex === 0 ? null : (
                         <span
                           aria-hidden="true"
-                          className="hidden truncate pt-1 text-[12px] leading-4 text-muted max-md:block"
+                          className="hidden pt-1 text-[12px] leading-4 text-muted blocks:block"
                         >
                           {column.label}
                         </span>
@@ -156,7 +152,7 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
                     </td>
                   );
                 })}
-                <td role="cell" className="whitespace-nowrap text-right max-md:order-1 max-md:-mr-3">
+                <td role="cell" className="whitespace-nowrap text-right blocks:order-1 max-md:-mr-3">
                   <RowButton
                     label={`Move row ${index + 1} up`}
                     move="up"
@@ -213,6 +209,26 @@ export function TableInput({ input, state, materials, onChange, faults, fault }:
 function rowSentence(table: string, row: number, message: string): string {
   const named = `${table}, row ${row}: `;
   return `Row ${row}: ${message.startsWith(named) ? message.slice(named.length) : message}`;
+}
+
+/** More columns than the pane of the inputs has room for; the names of materials are long. */
+function isWide(columns: readonly Column[]): boolean {
+  const widths = { number: 80, text: 98, choice: 98, material: 180 };
+  return columns.reduce((sum, { kind }) => sum + widths[kind], 0) > 300;
+}
+
+function cellLook(columns: readonly Column[], index: number): string {
+  const kind = columns[index]?.kind;
+  const width = kind === "number" ? "w-[80px]" : "min-w-[98px]";
+  const besideMaterial = columns.some((column) => column.kind === "material");
+  const basis =
+    kind === "material"
+      ? "blocks:basis-[60%]"
+      : besideMaterial
+        ? "blocks:basis-[30%]"
+        : "blocks:basis-[calc(50%-8px)]";
+  const place = index === 0 ? "blocks:basis-[calc(100%-144px)]" : `blocks:order-2 ${basis}`;
+  return `py-0.5 pr-1.5 align-middle blocks:min-w-0 blocks:flex-1 blocks:p-0 ${width} ${place}`;
 }
 
 function hasUnit(column: Column): column is Extract<Column, { kind: "number" }> {
