@@ -8,7 +8,12 @@ import { setUp } from "../actions";
 
 /** Makes the first person of an installation. */
 export function SetUpForm() {
-  const [state, action, busy] = useActionState(setUp, { done: false, problem: null, faults: {} });
+  const [state, action, busy] = useActionState(setUp, {
+    done: false,
+    problem: null,
+    faults: {},
+    typed: { code: "", name: "", email: "" },
+  });
   if (state.done) {
     return (
       <div className="mt-5">
@@ -24,6 +29,7 @@ export function SetUpForm() {
       <TextField
         label="Set-up code"
         name="code"
+        defaultValue={state.typed.code}
         required
         maxLength={64}
         autoComplete="off"
@@ -33,6 +39,7 @@ export function SetUpForm() {
       <TextField
         label="Your name"
         name="name"
+        defaultValue={state.typed.name}
         required
         maxLength={120}
         autoComplete="name"
@@ -41,6 +48,7 @@ export function SetUpForm() {
       <TextField
         label="Mail address"
         name="email"
+        defaultValue={state.typed.email}
         type="email"
         required
         maxLength={254}
