@@ -2,6 +2,8 @@ import type { Metadata, Viewport } from "next";
 import { headers } from "next/headers";
 import { connection } from "next/server";
 import type { ReactNode } from "react";
+import { firstPaintScript } from "./_components/scheme";
+import { SchemeFollower } from "./_components/scheme-follower";
 import { archivo, greek, mono } from "./fonts";
 import "./globals.css";
 import "katex/dist/katex.min.css";
@@ -21,9 +23,6 @@ export const viewport: Viewport = {
   ],
 };
 
-/** Sets the scheme before the first paint: the person's choice, else the system's, which is followed when it changes. */
-const schemeScript = `(function(){var m=matchMedia("(prefers-color-scheme: dark)");function set(){var s=null;try{s=localStorage.getItem("coldface-scheme")}catch(e){}document.documentElement.classList.toggle("dark",s?s==="dark":m.matches)}set();m.addEventListener("change",set)})()`;
-
 export default async function RootLayout({ children }: { children: ReactNode }) {
   // Pages are never prerendered: a nonce belongs to one answer.
   await connection();
@@ -35,9 +34,16 @@ export default async function RootLayout({ children }: { children: ReactNode }) 
       suppressHydrationWarning
     >
       <head>
-        <script nonce={nonce} suppressHydrationWarning dangerouslySetInnerHTML={{ __html: schemeScript }} />
+        <script
+          nonce={nonce}
+          suppressHydrationWarning
+          dangerouslySetInnerHTML={{ __html: firstPaintScript }}
+        />
       </head>
-      <body>{children}</body>
+      <body>
+        <SchemeFollower />
+        {children}
+      </body>
     </html>
   );
 }

@@ -3,6 +3,7 @@
 import { UserRound } from "lucide-react";
 import { DropdownMenu } from "radix-ui";
 import { signOut } from "next-auth/react";
+import { chooseScheme } from "./scheme";
 
 interface AccountMenuProps {
   name: string;
@@ -12,13 +13,6 @@ interface AccountMenuProps {
 
 const item =
   "flex min-h-9 w-full items-center px-3 text-left outline-none data-[highlighted]:bg-film max-md:min-h-11";
-
-function chooseScheme(scheme: "light" | "dark" | "system") {
-  if (scheme === "system") localStorage.removeItem("coldface-scheme");
-  else localStorage.setItem("coldface-scheme", scheme);
-  const dark = scheme === "system" ? matchMedia("(prefers-color-scheme: dark)").matches : scheme === "dark";
-  document.documentElement.classList.toggle("dark", dark);
-}
 
 /** Who is signed in, the colour scheme, and the way out. */
 export function AccountMenu({ name, email, role }: AccountMenuProps) {

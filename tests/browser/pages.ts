@@ -83,7 +83,7 @@ export function describePages(size: { width: number; height: number }, narrower?
         const light = await groundOf(page);
         await page.emulateMedia({ colorScheme: "dark" });
         await soon(() => groundOf(page)).not.toBe(light);
-        expect(await axeFaults(page, foreign)).toEqual([]);
+        expect(await axeFaults(page, foreign, "colours")).toEqual([]);
         for (const width of narrower === undefined ? [size.width] : [size.width, narrower]) {
           await page.setViewportSize({ ...size, width });
           if (foreign === undefined) await soon(() => overflow(page)).toBe(0);

@@ -74,6 +74,7 @@ describe("rows", () => {
         expect(await isFocused(field(page, "Name, row 3"))).toBe(true);
         await page.keyboard.type("Plaster");
         await field(page, "Thickness, row 3").fill("1 in");
+        await field(page, "Thickness, row 3").blur();
         await page
           .getByRole("combobox", { name: "Material, row 3", exact: true })
           .selectOption("stone-wool-mat");
