@@ -1,7 +1,7 @@
 import type { Page } from "playwright-core";
 import { beforeAll, describe, expect, it } from "vitest";
 import { makeKeyOf, makePerson } from "../factories/people";
-import { axeFaults, hasRun, site, soon, type DemoPerson } from "./browser";
+import { axeFaults, faultOf, field, hasRun, openTemplate, site, soon, type DemoPerson } from "./browser";
 
 interface Place {
   readonly name: string;
@@ -92,7 +92,49 @@ export function describePages(size: { width: number; height: number }, narrower?
       });
     });
   });
+
+  it.each(windows)(
+    "on %s: %s opens a clean window, and Escape gives the focus back",
+    async (address, name, role) => {
+      await coldface.visit({ as: engineer, size }, async (page) => {
+        await page.goto(address);
+        const opener = page.getByRole("button", { name, exact: true });
+        await soon(() => opener.isEnabled()).toBe(true);
+        await opener.click();
+        await page.getByRole(role).waitFor();
+        expect(await axeFaults(page)).toEqual([]);
+        await page.emulateMedia({ colorScheme: "dark" });
+        expect(await axeFaults(page, undefined, "colours")).toEqual([]);
+        expect(await overflow(page)).toBe(0);
+        await page.keyboard.press("Escape");
+        await page.getByRole(role).waitFor({ state: "detached" });
+        expect(await opener.evaluate((element) => element === document.activeElement)).toBe(true);
+      });
+    },
+  );
+
+  it("stays readable while a run waits for a field", async () => {
+    await coldface.visit({ as: engineer, size }, async (page) => {
+      await openTemplate(page, "insulated-pipe");
+      await field(page, "Bore").fill("about fifty");
+      await field(page, "Radial thickness, row 1").fill("thin");
+      await soon(() => faultOf(field(page, "Bore"))).not.toBe("");
+      expect(await axeFaults(page)).toEqual([]);
+      await page.emulateMedia({ colorScheme: "dark" });
+      expect(await axeFaults(page, undefined, "colours")).toEqual([]);
+      expect(await overflow(page)).toBe(0);
+    });
+  });
 }
+
+/** Everything that opens over a page: where, what opens it, and what is then there. */
+const windows = [
+  ["/templates/insulated-pipe", "Keep record", "dialog"],
+  ["/templates/insulated-pipe", "As a call", "dialog"],
+  ["/templates/insulated-pipe", "Paste from a table", "dialog"],
+  ["/templates/insulated-pipe", /^Account of/, "menu"],
+  ["/records/R-000001", "Run again", "dialog"],
+] as const;
 
 const groundOf = (page: Page) => page.evaluate(() => getComputedStyle(document.body).backgroundColor);
 

@@ -58,7 +58,7 @@ export function LimitsPane({
     evaluation?.notices ?? definition.notices.map((message, index) => ({ code: `notice-${index}`, message }));
   return (
     <div
-      className={`min-w-0 border-rule px-6 pb-5 pt-4 max-lg:border-t max-md:px-4 lg:border-l ${stale ? "opacity-60" : ""}`}
+      className={`min-w-0 border-rule px-6 pb-5 pt-4 max-lg:border-t max-md:px-4 lg:border-l ${stale ? "waiting" : ""}`}
     >
       <h2 className="mb-2.5">Limits</h2>
       <ul aria-live="polite">

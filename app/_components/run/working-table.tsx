@@ -31,7 +31,7 @@ export function WorkingTable({
       <h2 className="mb-2.5">
         Working <small>each line with its unit; values of this run</small>
       </h2>
-      <ol className={stale ? "opacity-60" : ""}>
+      <ol className={stale ? "waiting" : ""}>
         {rows.map((row, index) => {
           const step = steps.get(row.symbol);
           const unit = step?.unit ?? row.unit;

@@ -36,7 +36,7 @@ export function ResultsPane({ definition, evaluation, stale, pending, waiting, g
         ))}
       </div>
       <table
-        className={`w-full border-collapse ${stale ? "opacity-50" : ""}`}
+        className={`w-full border-collapse ${stale ? "waiting" : ""}`}
         aria-live="polite"
         aria-busy={pending}
       >

@@ -69,11 +69,6 @@ export function RunDesk(props: RunDeskProps) {
   const evaluation = run.evaluation;
   const stale = Object.keys(built.faults).length > 0 || run.problem !== null;
 
-  // A table of many columns takes more of the page from the drawing.
-  const columns = definition.inputs.some((input) => input.kind === "table" && input.columns.length > 4)
-    ? "md:grid-cols-[minmax(340px,540px)_minmax(0,1fr)]"
-    : "md:grid-cols-[minmax(340px,428px)_minmax(0,1fr)]";
-
   return (
     <>
       <div className="mb-5 flex flex-wrap items-end gap-x-6 gap-y-2 max-md:mb-4 max-md:px-4">
@@ -90,7 +85,7 @@ export function RunDesk(props: RunDeskProps) {
           onReset={() => form.reset(initialValues(definition))}
         />
       </div>
-      <div className={`grid border border-rule bg-sheet max-md:border-x-0 ${columns}`}>
+      <div className="grid border border-rule bg-sheet max-md:border-x-0 md:grid-cols-[minmax(340px,428px)_minmax(0,1fr)]">
         <form
           className="order-1 min-w-0 border-rule max-md:border-b md:order-none md:border-r"
           onSubmit={(event) => event.preventDefault()}
