@@ -50,8 +50,9 @@ function command(name: string, args: string[] = []): string {
 async function serve(where: string, port: number, ready: string): Promise<string> {
   const server = spawn(
     process.execPath,
-    [path.resolve(next), "start", where, "--hostname", "127.0.0.1", "--port", String(port)],
+    [path.resolve(next), "start", "--hostname", "127.0.0.1", "--port", String(port)],
     {
+      cwd: where,
       env: {
         ...settings,
         PORT: String(port),
@@ -138,7 +139,9 @@ try {
   writeFileSync(`${folder}/rows.json`, await post(`${wall}/evaluate-rows`, rowsBody));
   writeFileSync(`${folder}/record.json`, await post(`${wall}/records`, evaluateBody));
 
-  execFileSync(process.execPath, [path.resolve(next), "build", "tests/bench/bare"], {
+  // Webpack, because the other bundler looks for proxy and instrumentation at the root of the repository: the product's.
+  execFileSync(process.execPath, [path.resolve(next), "build", "--webpack"], {
+    cwd: "tests/bench/bare",
     env: settings,
     stdio: ["ignore", "ignore", "inherit"],
   });
