@@ -25,33 +25,31 @@ export function AccountMenu({ name, email, role }: AccountMenuProps) {
         <UserRound size={18} aria-hidden="true" className="md:hidden" />
         <span className="max-md:hidden">{role}</span>
       </DropdownMenu.Trigger>
-      <DropdownMenu.Portal>
-        <DropdownMenu.Content
-          align="end"
-          sideOffset={6}
-          className="z-40 w-64 rounded border border-ink bg-sheet p-1"
-        >
-          <div className="border-b border-soft px-3 pb-2 pt-1.5">
-            <p className="font-[620]">{name}</p>
-            <p className="break-all text-[13px] text-muted">{email}</p>
-            <p className="text-[13px] text-muted md:hidden">{role}</p>
-          </div>
-          <DropdownMenu.Label className="px-3 pb-1 pt-2 text-[11px] text-muted">Colours</DropdownMenu.Label>
-          <DropdownMenu.Item className={item} onSelect={() => chooseScheme("light")}>
-            Light
-          </DropdownMenu.Item>
-          <DropdownMenu.Item className={item} onSelect={() => chooseScheme("dark")}>
-            Dark, for control rooms
-          </DropdownMenu.Item>
-          <DropdownMenu.Item className={item} onSelect={() => chooseScheme("system")}>
-            As the device
-          </DropdownMenu.Item>
-          <DropdownMenu.Separator className="my-1 border-t border-soft" />
-          <DropdownMenu.Item className={item} onSelect={() => void signOut({ callbackUrl: "/sign-in" })}>
-            Sign out
-          </DropdownMenu.Item>
-        </DropdownMenu.Content>
-      </DropdownMenu.Portal>
+      <DropdownMenu.Content
+        align="end"
+        sideOffset={6}
+        className="z-40 w-64 rounded border border-ink bg-sheet p-1"
+      >
+        <div className="border-b border-soft px-3 pb-2 pt-1.5">
+          <p className="font-[620]">{name}</p>
+          <p className="break-all text-[13px] text-muted">{email}</p>
+          <p className="text-[13px] text-muted md:hidden">{role}</p>
+        </div>
+        <DropdownMenu.Label className="px-3 pb-1 pt-2 text-[11px] text-muted">Colours</DropdownMenu.Label>
+        <DropdownMenu.Item className={item} onSelect={() => chooseScheme("light")}>
+          Light
+        </DropdownMenu.Item>
+        <DropdownMenu.Item className={item} onSelect={() => chooseScheme("dark")}>
+          Dark, for control rooms
+        </DropdownMenu.Item>
+        <DropdownMenu.Item className={item} onSelect={() => chooseScheme("system")}>
+          As the device
+        </DropdownMenu.Item>
+        <DropdownMenu.Separator className="my-1 border-t border-soft" />
+        <DropdownMenu.Item className={item} onSelect={() => void signOut({ callbackUrl: "/sign-in" })}>
+          Sign out
+        </DropdownMenu.Item>
+      </DropdownMenu.Content>
     </DropdownMenu.Root>
   );
 }

@@ -41,25 +41,23 @@ export function SiteNavigation() {
         >
           <Menu size={18} aria-hidden="true" />
         </DropdownMenu.Trigger>
-        <DropdownMenu.Portal>
-          <DropdownMenu.Content
-            align="start"
-            sideOffset={4}
-            className="z-40 min-w-52 rounded border border-ink bg-sheet p-1"
-          >
-            {places.map((place) => (
-              <DropdownMenu.Item key={place.href} asChild>
-                <Link
-                  href={place.href}
-                  aria-current={isHere(place.href, path) ? "page" : undefined}
-                  className="flex min-h-11 items-center px-3 outline-none data-[highlighted]:bg-film aria-[current]:font-[620]"
-                >
-                  {place.label}
-                </Link>
-              </DropdownMenu.Item>
-            ))}
-          </DropdownMenu.Content>
-        </DropdownMenu.Portal>
+        <DropdownMenu.Content
+          align="start"
+          sideOffset={4}
+          className="z-40 min-w-52 rounded border border-ink bg-sheet p-1"
+        >
+          {places.map((place) => (
+            <DropdownMenu.Item key={place.href} asChild>
+              <Link
+                href={place.href}
+                aria-current={isHere(place.href, path) ? "page" : undefined}
+                className="flex min-h-11 items-center px-3 outline-none data-[highlighted]:bg-film aria-[current]:font-[620]"
+              >
+                {place.label}
+              </Link>
+            </DropdownMenu.Item>
+          ))}
+        </DropdownMenu.Content>
       </DropdownMenu.Root>
     </>
   );

@@ -96,7 +96,7 @@ export function CurvePlot({
     .flatMap((row) => figure.y.map((name) => (row as Record<string, number>)[name]))
     .filter((value): value is number => value !== undefined && Number.isFinite(value));
   return (
-    <figure className={`pb-2 ${drawable ? "" : "opacity-60"}`}>
+    <figure className="pb-2">
       <figcaption className="mb-1 text-[13px]">
         <span className="font-[620] [font-stretch:92%]">{figure.title}</span>
         <span className="ml-3 text-muted">
@@ -104,7 +104,7 @@ export function CurvePlot({
         </span>
       </figcaption>
       <div
-        className="h-[264px]"
+        className={`h-[264px] ${drawable ? "" : "opacity-60"}`}
         role="img"
         aria-label={`${labels.join(" and ")} against ${input?.label ?? symbol}, from ${figure.x.from} to ${figure.x.to} ${unit}`}
       >
