@@ -188,13 +188,24 @@ export async function faultOf(field: Locator): Promise<string> {
   );
 }
 
-/** What axe finds against WCAG 2.2 AA, one line each; a foreign viewer is left out, with the second main that it brings. */
-export async function axeFaults(page: Page, foreign?: string, only?: "colours"): Promise<string[]> {
+interface AxeOptions {
+  /** Selector of a foreign viewer: it is left out, with the second main that it brings. */
+  readonly foreign?: string;
+  /** Selector of the one part that is looked at. */
+  readonly within?: string;
+  /** Contrast alone, for what differs in nothing else from what was looked at before. */
+  readonly colours?: boolean;
+}
+
+/** What axe finds against WCAG 2.2 AA, one line each. */
+export async function axeFaults(page: Page, options: AxeOptions = {}): Promise<string[]> {
   // Without the option most of the time goes into naming the places of what is in order.
   const builder = new AxeBuilder({ page }).options({ resultTypes: ["violations"] });
-  if (only === "colours") builder.withRules("color-contrast");
+  if (options.colours) builder.withRules("color-contrast");
   else builder.withTags(["wcag2a", "wcag2aa", "wcag21a", "wcag21aa", "wcag22aa", "best-practice"]);
-  if (foreign !== undefined) builder.exclude(foreign).disableRules("landmark-no-duplicate-main");
+  if (options.within !== undefined) builder.include(options.within);
+  if (options.foreign !== undefined)
+    builder.exclude(options.foreign).disableRules("landmark-no-duplicate-main");
   const { violations } = await builder.analyze();
   return violations.flatMap(({ id, help, nodes }) =>
     nodes.map((node) =>

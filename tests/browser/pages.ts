@@ -79,11 +79,11 @@ export function describePages(size: { width: number; height: number }, narrower?
         expect(reply?.status()).toBe(status);
         await page.getByRole("heading", { level: 1 }).waitFor();
         await ready?.(page);
-        expect(await axeFaults(page, foreign)).toEqual([]);
+        expect(await axeFaults(page, { foreign })).toEqual([]);
         const light = await groundOf(page);
         await page.emulateMedia({ colorScheme: "dark" });
         await soon(() => groundOf(page)).not.toBe(light);
-        expect(await axeFaults(page, foreign, "colours")).toEqual([]);
+        expect(await axeFaults(page, { foreign, colours: true })).toEqual([]);
         for (const width of narrower === undefined ? [size.width] : [size.width, narrower]) {
           await page.setViewportSize({ ...size, width });
           if (foreign === undefined) await soon(() => overflow(page)).toBe(0);
@@ -102,9 +102,9 @@ export function describePages(size: { width: number; height: number }, narrower?
         await soon(() => opener.isEnabled()).toBe(true);
         await opener.click();
         await page.getByRole(role).waitFor();
-        expect(await axeFaults(page)).toEqual([]);
+        expect(await axeFaults(page, { within: `[role=${role}]` })).toEqual([]);
         await page.emulateMedia({ colorScheme: "dark" });
-        expect(await axeFaults(page, undefined, "colours")).toEqual([]);
+        expect(await axeFaults(page, { within: `[role=${role}]`, colours: true })).toEqual([]);
         expect(await overflow(page)).toBe(0);
         await page.keyboard.press("Escape");
         await page.getByRole(role).waitFor({ state: "detached" });
@@ -121,7 +121,7 @@ export function describePages(size: { width: number; height: number }, narrower?
       await soon(() => faultOf(field(page, "Bore"))).not.toBe("");
       expect(await axeFaults(page)).toEqual([]);
       await page.emulateMedia({ colorScheme: "dark" });
-      expect(await axeFaults(page, undefined, "colours")).toEqual([]);
+      expect(await axeFaults(page, { colours: true })).toEqual([]);
       expect(await overflow(page)).toBe(0);
     });
   });
