@@ -86,7 +86,7 @@ const may = {
 };
 
 const config = [
-  { ignores: [".next/**", "dist/**", "data/**", "node_modules/**", "next-env.d.ts", "coverage/**"] },
+  { ignores: ["**/.next/**", "dist/**", "data/**", "node_modules/**", "next-env.d.ts", "coverage/**"] },
   ...next,
   ...nextTypescript,
   {
