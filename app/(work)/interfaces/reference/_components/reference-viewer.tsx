@@ -28,7 +28,7 @@ function useSchemeOfViewer() {
 export function ReferenceViewer({ address }: { address: string }) {
   useSchemeOfViewer();
   return (
-    <div className="border border-rule bg-sheet max-md:border-x-0">
+    <div className="overflow-x-auto border border-rule bg-sheet max-md:border-x-0">
       <SwaggerUI
         url={address}
         docExpansion="list"

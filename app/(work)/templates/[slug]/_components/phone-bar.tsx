@@ -20,7 +20,7 @@ export function PhoneBar({
     evaluation.limits.find((limit) => limit.broken);
   return (
     <div
-      className={`fixed inset-x-0 bottom-0 z-30 bg-ink px-4 py-2 text-sheet md:hidden ${stale ? "[&>*]:opacity-60" : ""}`}
+      className={`fixed inset-x-0 bottom-0 z-30 bg-ink px-4 py-2 text-sheet md:hidden ${stale ? "[&>*]:opacity-80" : ""}`}
       aria-hidden="true"
     >
       <div className="flex items-center justify-between gap-3">
@@ -41,7 +41,9 @@ export function PhoneBar({
           );
         })}
       </div>
-      {worst ? (
+      {stale ? (
+        <p className="text-[12px]">Of the run before; the present one waits.</p>
+      ) : worst ? (
         <p className="truncate text-[12px]">{`${worst.level === "stop" ? "Stop" : "Caution"}: ${worst.message ?? worst.label}`}</p>
       ) : null}
     </div>

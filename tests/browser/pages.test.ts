@@ -1,7 +1,17 @@
 import type { Page } from "playwright-core";
 import { beforeAll, describe, expect, it } from "vitest";
 import { makeKeyOf, makePerson } from "../factories/people";
-import { axeFaults, faultOf, field, hasRun, openTemplate, site, soon, type DemoPerson } from "./browser";
+import {
+  axeFaults,
+  phone,
+  faultOf,
+  field,
+  hasRun,
+  openTemplate,
+  site,
+  soon,
+  type DemoPerson,
+} from "./browser";
 
 interface Place {
   readonly name: string;
@@ -49,84 +59,6 @@ const places: readonly Place[] = [
   { name: "an address of nothing", address: "/nothing/here", as: engineer, status: 404 },
 ];
 
-/** The tests of every page at one size: light, dark, narrow, read out, and quiet. */
-export function describePages(size: { width: number; height: number }, narrower?: number): void {
-  const coldface = site();
-
-  beforeAll(async () => {
-    const owner = await makePerson({ role: "engineer" });
-    const { key } = await makeKeyOf(owner, { scopes: ["runs:evaluate", "records:write", "records:read"] });
-    const keep = (slug: string, body: object) =>
-      coldface.server.call("POST", `/templates/${slug}/records`, { key, body });
-    await keep("furnace-lining", {
-      title: "Crown, winter campaign",
-      tags: ["F-1", "crown"],
-      note: "As built.",
-    });
-    const { json } = await keep("insulated-pipe", {
-      title: "A long title that somebody typed for a long pipe bridge",
-    });
-    await coldface.server.call("POST", `/records/${String(json.number)}/void`, {
-      key,
-      body: { reason: "Entered for the wrong line." },
-    });
-  });
-
-  describe.each(places)("$name", ({ address, as, status = 200, ready, foreign }) => {
-    it(`is clean at ${size.width} px, light and dark`, async () => {
-      await coldface.visit({ as, size, refusals: [status] }, async (page) => {
-        const reply = await page.goto(address);
-        expect(reply?.status()).toBe(status);
-        await page.getByRole("heading", { level: 1 }).waitFor();
-        await ready?.(page);
-        expect(await axeFaults(page, { foreign })).toEqual([]);
-        const light = await groundOf(page);
-        await page.emulateMedia({ colorScheme: "dark" });
-        await soon(() => groundOf(page)).not.toBe(light);
-        expect(await axeFaults(page, { foreign, colours: true })).toEqual([]);
-        for (const width of narrower === undefined ? [size.width] : [size.width, narrower]) {
-          await page.setViewportSize({ ...size, width });
-          if (foreign === undefined) await soon(() => overflow(page)).toBe(0);
-        }
-        if (size.width < 760) expect(await smallTargets(page, foreign)).toEqual([]);
-      });
-    });
-  });
-
-  it.each(windows)(
-    "on %s: %s opens a clean window, and Escape gives the focus back",
-    async (address, name, role) => {
-      await coldface.visit({ as: engineer, size }, async (page) => {
-        await page.goto(address);
-        const opener = page.getByRole("button", { name, exact: true });
-        await soon(() => opener.isEnabled()).toBe(true);
-        await opener.click();
-        await page.getByRole(role).waitFor();
-        expect(await axeFaults(page, { within: `[role=${role}]` })).toEqual([]);
-        await page.emulateMedia({ colorScheme: "dark" });
-        expect(await axeFaults(page, { within: `[role=${role}]`, colours: true })).toEqual([]);
-        expect(await overflow(page)).toBe(0);
-        await page.keyboard.press("Escape");
-        await page.getByRole(role).waitFor({ state: "detached" });
-        expect(await opener.evaluate((element) => element === document.activeElement)).toBe(true);
-      });
-    },
-  );
-
-  it("stays readable while a run waits for a field", async () => {
-    await coldface.visit({ as: engineer, size }, async (page) => {
-      await openTemplate(page, "insulated-pipe");
-      await field(page, "Bore").fill("about fifty");
-      await field(page, "Radial thickness, row 1").fill("thin");
-      await soon(() => faultOf(field(page, "Bore"))).not.toBe("");
-      expect(await axeFaults(page)).toEqual([]);
-      await page.emulateMedia({ colorScheme: "dark" });
-      expect(await axeFaults(page, { colours: true })).toEqual([]);
-      expect(await overflow(page)).toBe(0);
-    });
-  });
-}
-
 /** Everything that opens over a page: where, what opens it, and what is then there. */
 const windows = [
   ["/templates/insulated-pipe", "Keep record", "dialog"],
@@ -135,6 +67,94 @@ const windows = [
   ["/templates/insulated-pipe", /^Account of/, "menu"],
   ["/records/R-000001", "Run again", "dialog"],
 ] as const;
+
+const coldface = site();
+
+beforeAll(async () => {
+  const owner = await makePerson({ role: "engineer" });
+  const { key } = await makeKeyOf(owner, { scopes: ["runs:evaluate", "records:write", "records:read"] });
+  const keep = (slug: string, body: object) =>
+    coldface.server.call("POST", `/templates/${slug}/records`, { key, body });
+  await keep("furnace-lining", {
+    title: "Crown, winter campaign",
+    tags: ["F-1", "crown"],
+    note: "As built.",
+  });
+  const { json } = await keep("insulated-pipe", {
+    title: "A long title that somebody typed for a long pipe bridge",
+  });
+  await coldface.server.call("POST", `/records/${String(json.number)}/void`, {
+    key,
+    body: { reason: "Entered for the wrong line." },
+  });
+});
+
+/** At a desk and on a phone, light and dark: nothing for axe to find, nothing to scroll sideways for. */
+async function expectClean(page: Page, options: { foreign?: string; within?: string } = {}): Promise<void> {
+  expect(await axeFaults(page, options)).toEqual([]);
+  const light = await groundOf(page);
+  await page.emulateMedia({ colorScheme: "dark" });
+  await soon(() => groundOf(page)).not.toBe(light);
+  expect(await axeFaults(page, { ...options, colours: true })).toEqual([]);
+  await page.setViewportSize(phone);
+  await soon(() => overflow(page)).toBe(0);
+  expect(await axeFaults(page, options)).toEqual([]);
+  expect(await smallTargets(page, options.foreign)).toEqual([]);
+  await page.emulateMedia({ colorScheme: "light" });
+  await soon(() => groundOf(page)).toBe(light);
+  expect(await axeFaults(page, { ...options, colours: true })).toEqual([]);
+  await page.setViewportSize({ ...phone, width: 360 });
+  await soon(() => overflow(page)).toBe(0);
+}
+
+describe("at 1440 px and 390 px, light and dark", () => {
+  it.each(places)("$name is clean", async ({ address, as, status = 200, ready, foreign }) => {
+    await coldface.visit({ as, refusals: [status] }, async (page) => {
+      const reply = await page.goto(address);
+      expect(reply?.status()).toBe(status);
+      await page.getByRole("heading", { level: 1 }).waitFor();
+      await ready?.(page);
+      await expectClean(page, { foreign });
+    });
+  });
+
+  it.each(windows)(
+    "on %s the window of %s is clean, and Escape gives the focus back",
+    async (address, name, role) => {
+      await coldface.visit({ as: engineer }, async (page) => {
+        await page.goto(address);
+        const opener = page.getByRole("button", { name, exact: true });
+        await soon(() => opener.isEnabled()).toBe(true);
+        await opener.click();
+        await page.getByRole(role).waitFor();
+        await expectClean(page, { within: `[role=${role}]` });
+        await page.keyboard.press("Escape");
+        await page.getByRole(role).waitFor({ state: "detached" });
+        expect(await opener.evaluate((element) => element === document.activeElement)).toBe(true);
+      });
+    },
+  );
+
+  it("the places of the site are in a menu on a phone", async () => {
+    await coldface.visit({ as: engineer, size: phone }, async (page) => {
+      await page.goto("/");
+      await page.getByRole("button", { name: "Menu" }).click();
+      expect(await axeFaults(page, { within: "[role=menu]" })).toEqual([]);
+      await page.getByRole("menuitem", { name: "Materials" }).click();
+      await page.waitForURL(/\/materials$/);
+    });
+  });
+
+  it("a page stays readable while its run waits for a field", async () => {
+    await coldface.visit({ as: engineer }, async (page) => {
+      await openTemplate(page, "insulated-pipe");
+      await field(page, "Bore").fill("about fifty");
+      await field(page, "Radial thickness, row 1").fill("thin");
+      await soon(() => faultOf(field(page, "Bore"))).not.toBe("");
+      await expectClean(page);
+    });
+  });
+});
 
 const groundOf = (page: Page) => page.evaluate(() => getComputedStyle(document.body).backgroundColor);
 

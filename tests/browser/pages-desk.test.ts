@@ -1,4 +1,0 @@
-import { desk } from "./browser";
-import { describePages } from "./pages";
-
-describePages(desk);

@@ -1,4 +1,0 @@
-import { phone } from "./browser";
-import { describePages } from "./pages";
-
-describePages(phone, 360);
