@@ -50,7 +50,7 @@ export function FilterForm({ fields }: { fields: readonly FilterField[] }) {
               name={field.name}
               defaultValue={present.get(field.name) ?? ""}
               onChange={(event) => event.target.form && apply(event.target.form)}
-              className="h-9 min-w-44 rounded border border-rule bg-field pl-2 pr-6 max-md:h-11 max-md:min-w-0 max-md:w-full"
+              className="h-9 min-w-44 rounded border border-(--field-rule) bg-field pl-2 pr-6 max-md:h-11 max-md:min-w-0 max-md:w-full"
             >
               <option value="">all</option>
               {field.options.map((option) => (
@@ -66,7 +66,7 @@ export function FilterForm({ fields }: { fields: readonly FilterField[] }) {
               defaultValue={present.get(field.name) ?? ""}
               placeholder={field.placeholder}
               maxLength={100}
-              className="h-9 w-64 rounded border border-rule bg-field px-2.5 placeholder:text-muted max-md:h-11 max-md:w-full"
+              className="h-9 w-64 rounded border border-(--field-rule) bg-field px-2.5 placeholder:text-muted max-md:h-11 max-md:w-full"
             />
           )}
         </div>

@@ -40,7 +40,7 @@ export function FindBox() {
         aria-label="Find a calculation"
         aria-keyshortcuts="/"
         placeholder="Find a calculation"
-        className="h-8 w-full rounded border border-rule bg-field px-2.5 placeholder:text-muted max-md:h-11 max-md:px-2 [&::-webkit-search-cancel-button]:appearance-none"
+        className="h-8 w-full rounded border border-(--field-rule) bg-field px-2.5 placeholder:text-muted max-md:h-11 max-md:px-2 [&::-webkit-search-cancel-button]:appearance-none"
       />
       <kbd
         aria-hidden="true"

@@ -40,7 +40,7 @@ export function QuantityField({
         <span>{label}</span>
       </label>
       <div
-        className={`grid h-8 grid-cols-[1fr_auto] rounded border bg-field focus-within:outline focus-within:outline-2 focus-within:outline-offset-1 focus-within:outline-ink max-md:h-11 ${fault ? "border-fault" : "border-rule"}`}
+        className={`grid h-8 grid-cols-[1fr_auto] rounded border bg-field focus-within:outline focus-within:outline-2 focus-within:outline-offset-1 focus-within:outline-ink max-md:h-11 ${fault ? "border-fault" : "border-(--field-rule)"}`}
       >
         <input
           id={id}

@@ -40,7 +40,7 @@ export function TextField({
         id={id}
         aria-invalid={fault ? true : undefined}
         aria-describedby={`${id}-note`}
-        className={`${box} h-9 max-md:h-11 ${fault ? "border-fault" : "border-rule"} ${className}`}
+        className={`${box} h-9 max-md:h-11 ${fault ? "border-fault" : "border-(--field-rule)"} ${className}`}
         {...rest}
       />
     </Frame>
@@ -63,7 +63,7 @@ export function TextArea({
         aria-invalid={fault ? true : undefined}
         aria-describedby={`${id}-note`}
         rows={3}
-        className={`${box} py-2 ${fault ? "border-fault" : "border-rule"} ${className}`}
+        className={`${box} py-2 ${fault ? "border-fault" : "border-(--field-rule)"} ${className}`}
         {...rest}
       />
     </Frame>

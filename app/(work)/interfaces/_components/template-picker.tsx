@@ -27,7 +27,7 @@ export function TemplatePicker({
             scroll: false,
           })
         }
-        className="h-9 w-full max-w-md rounded border border-rule bg-field pl-2 pr-6 max-md:h-11"
+        className="h-9 w-full max-w-md rounded border border-(--field-rule) bg-field pl-2 pr-6 max-md:h-11"
       >
         {templates.map((template) => (
           <option key={template.slug} value={template.slug} className="bg-sheet text-ink">

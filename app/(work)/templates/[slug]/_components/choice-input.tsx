@@ -27,7 +27,7 @@ export function ChoiceInput({ input, state, onChange, fault }: Props) {
         onChange={(event) => onChange({ ...state, option: event.target.value, origin: "typed" })}
         aria-invalid={fault ? true : undefined}
         aria-describedby={`${id}-note`}
-        className={`h-8 w-full rounded border bg-field pl-2 pr-6 max-md:h-11 ${fault ? "border-fault" : "border-rule"}`}
+        className={`h-8 w-full rounded border bg-field pl-2 pr-6 max-md:h-11 ${fault ? "border-fault" : "border-(--field-rule)"}`}
       >
         {state.option === "" ? <option value="">choose</option> : null}
         {input.options.map((option) => (

@@ -42,7 +42,7 @@ export function MaterialPicker({
     needs.every((property) => material.properties.includes(property)),
   );
   const groups = [...new Set(fitting.map((material) => material.class))].sort();
-  const border = faultId ? "border-fault" : "border-rule";
+  const border = faultId ? "border-fault" : "border-(--field-rule)";
   const told = { "aria-invalid": faultId ? true : undefined, "aria-describedby": faultId };
   return (
     <div className="grid min-w-0 gap-1">

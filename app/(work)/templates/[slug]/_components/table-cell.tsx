@@ -25,7 +25,7 @@ interface CellProps {
 /** One cell of a table: a text, a number in the unit of its column, an option or a material. */
 export function TableCell({ column, cell, name, faultId, materials, onChange, onPaste }: CellProps) {
   const id = useId();
-  const border = faultId ? "border-fault" : "border-rule";
+  const border = faultId ? "border-fault" : "border-(--field-rule)";
   const told = {
     "aria-label": name,
     "aria-invalid": faultId ? true : undefined,
