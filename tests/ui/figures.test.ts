@@ -1,5 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
+import { tickTexts } from "@/app/_components/plot/axes";
 import { niceTicks } from "@/app/_components/plot/ticks";
 import { placeLabels } from "@/app/_components/section-strip/place-labels";
 
@@ -23,6 +24,21 @@ describe("round ticks", () => {
         expect(ticks.at(-1)).toBeGreaterThanOrEqual(high - slack);
       }),
     );
+  });
+});
+
+describe("texts of an axis", () => {
+  const texts = (ticks: number[]) => ticks.map(tickTexts(ticks));
+
+  it("have the same decimals", () => {
+    expect(texts(niceTicks(0.04, 0.22, 6))).toEqual(["0.00", "0.05", "0.10", "0.15", "0.20", "0.25"]);
+    expect(texts([0, 2.5, 5])).toEqual(["0.0", "2.5", "5.0"]);
+    expect(texts([-10, 0, 10])).toEqual(["\u221210", "0", "10"]);
+  });
+
+  it("leave the very large and the very small to the power of ten", () => {
+    expect(texts([0, 2e6])[1]).toBe("2·10⁶");
+    expect(texts([0, 0.00002])[1]).toBe("2·10⁻⁵");
   });
 });
 

@@ -13,11 +13,21 @@ export const tooltipStyle = {
 };
 
 export function tickText(value: number): string {
-  return formatSignificant(value, 3).replace(/\.0+$/, "");
+  return formatSignificant(value, 3).replace(/\.0+(?=$|·)/, "");
+}
+
+/** Texts of one axis, all with the same decimals: 0.05, 0.10, 0.15. Beyond plain reading the power of ten takes over. */
+export function tickTexts(ticks: readonly number[]): (value: number) => string {
+  const largest = Math.max(0, ...ticks.map(Math.abs));
+  const clean = (value: number) => (Math.abs(value) < 1e-9 * largest ? 0 : Number(value.toPrecision(6)));
+  const plain = ticks
+    .map(clean)
+    .every((tick) => tick === 0 || (Math.abs(tick) >= 1e-4 && Math.abs(tick) < 1e5));
+  const decimals = Math.max(0, ...ticks.map((tick) => String(clean(tick)).split(".")[1]?.length ?? 0));
+  return (value) => (plain ? clean(value).toFixed(decimals).replace("-", "\u2212") : tickText(clean(value)));
 }
 
 const look = {
-  tickFormatter: tickText,
   stroke: "var(--muted)",
   tick: { fontSize: 12, fill: "var(--ink)", fontFamily: "var(--font-mono)" },
 };
@@ -36,13 +46,13 @@ export function argumentAxis(
   unit: string,
   scale: "linear" | "log" = "linear",
 ) {
+  const ticks = niceTicks(low, high, 7).filter((tick) => tick >= low && tick <= high);
   return {
     ...look,
     type: "number" as const,
     scale,
     domain: [low, high] as [number, number],
-    ticks:
-      scale === "log" ? undefined : niceTicks(low, high, 7).filter((tick) => tick >= low && tick <= high),
+    ...(scale === "log" ? { tickFormatter: tickText } : { ticks, tickFormatter: tickTexts(ticks) }),
     label: { ...caption, value: withUnit(label, unit), position: "insideBottom" as const, offset: -14 },
   };
 }
@@ -54,6 +64,7 @@ export function valueAxis(values: readonly number[], unit: string) {
     ...look,
     width: 66,
     ticks,
+    tickFormatter: tickTexts(ticks),
     domain: [ticks[0] ?? 0, ticks.at(-1) ?? 1] as [number, number],
     label: { ...caption, value: unit === "1" ? "" : unit, position: "top" as const, offset: 8, dx: 18 },
   };
